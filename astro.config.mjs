@@ -1,0 +1,15 @@
+import node from '@astrojs/node';
+import react from '@astrojs/react';
+import tailwind from '@astrojs/tailwind';
+import { defineConfig } from 'astro/config';
+
+// Server mode on the Node adapter's middleware mode: the HTTP front (scripts/front) stands before it.
+export default defineConfig({
+  output: 'server',
+  adapter: node({ mode: 'middleware' }),
+  integrations: [react(), tailwind({ applyBaseStyles: false })],
+  devToolbar: { enabled: false },
+  // The front checks Origin on every unsafe request; Astro's own check stays on behind it. Any host is allowed
+  // here because the front has already refused hosts that are not PUBLIC_URL's.
+  security: { checkOrigin: true, allowedDomains: [{}] },
+});

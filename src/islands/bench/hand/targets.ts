@@ -1,0 +1,40 @@
+import { closestCenter, pointerWithin, type CollisionDetection, type KeyboardCoordinateGetter } from '@dnd-kit/core';
+
+/** Under a pointer: the vessel that it is in. By keys: the nearest vessel, once the bottle has left the shelf. */
+export const overVessel: CollisionDetection = args => {
+  if (args.pointerCoordinates) return pointerWithin(args);
+  const moved = args.collisionRect.top !== args.active.rect.current.initial?.top;
+  return moved ? closestCenter(args).slice(0, 1) : [];
+};
+
+const FORWARD = new Set(['ArrowRight', 'ArrowDown']);
+const BACK = new Set(['ArrowLeft', 'ArrowUp']);
+
+/** The id after `current` in the named direction; from nowhere, the wished one or the first. Stops at the ends. */
+export function nextTarget(ids: readonly string[], current: string | null, wished: string, key: string): string | null {
+  if (ids.length === 0 || (!FORWARD.has(key) && !BACK.has(key))) return null;
+  const at = current === null ? -1 : ids.indexOf(current);
+  if (at === -1) return ids.includes(wished) ? wished : ids[0]!;
+  const to = FORWARD.has(key) ? Math.min(ids.length - 1, at + 1) : Math.max(0, at - 1);
+  return ids[to]!;
+}
+
+/**
+ * Arrow keys carry the bottle from one named vessel to the next, in reading order, instead of by pixels.
+ * @param now where the bottle is, and which vessel the sentence names
+ */
+export function betweenVessels(now: () => { ids: readonly string[]; over: string | null; wished: string }): KeyboardCoordinateGetter {
+  return (event, { context }) => {
+    const { ids, over, wished } = now();
+    const next = nextTarget(ids, over, wished, event.code);
+    if (next === null) return undefined;
+    event.preventDefault();
+    const target = context.droppableRects.get(next);
+    const carried = context.collisionRect;
+    if (!target || !carried) return undefined;
+    return {
+      x: target.left + target.width / 2 - carried.width / 2,
+      y: target.top + target.height / 2 - carried.height / 2,
+    };
+  };
+}

@@ -1,0 +1,95 @@
+import type { CSSProperties, ReactNode } from 'react';
+import { FLOOR_MM, type GlassShape } from '../glass/shape';
+import { narrowLayout, wideLayout } from './layout';
+import { describeVessel, formatMl, type VesselLook } from './looks';
+
+interface SceneProps {
+  id: string;
+  title: string;
+  lead: string | null;
+  words: ReactNode;
+  shelf: ReactNode;
+  shapes: readonly GlassShape[];
+  stations: readonly ReactNode[];
+  description: string;
+}
+
+/** Wall, shelf, vessels and slab. The scene is described in words for those who do not see it. */
+export function Scene({ id, title, lead, words, shelf, shapes, stations, description }: SceneProps) {
+  const wide = wideLayout(shapes);
+  const narrow = narrowLayout(shapes);
+  const variables = {
+    '--wide-columns': wide.columns,
+    '--narrow-columns': narrow.columns,
+    '--wide-span': wide.span_mm,
+    '--narrow-span': narrow.span_mm,
+  } as CSSProperties;
+  return (
+    <div className="scene" style={variables} data-vessels={shapes.length}>
+      <div className="wall-tiles" aria-hidden="true" />
+      <div className="wall-top">
+        <div className="wall-words">
+          <span className="tape tape-kind">Bench</span>
+          <h2 id={`${id}-title`}>{title}</h2>
+          {lead && <p className="wall-lead">{lead}</p>}
+          {words}
+        </div>
+        {shelf}
+      </div>
+      <p className="visually-hidden">{description}</p>
+      <div className="stations">
+        {Array.from({ length: Math.max(wide.rows, narrow.rows) }, (_, row) => (
+          <Band key={row} row={row} wideRows={wide.rows} narrowRows={narrow.rows} />
+        ))}
+        {stations.map((station, i) => {
+          const w = wide.at[i]!;
+          const n = narrow.at[i]!;
+          const place = {
+            '--wide-column': w.column + 1,
+            '--wide-row': w.row * 3 + 1,
+            '--narrow-column': n.column + 1,
+            '--narrow-row': n.row * 3 + 1,
+          } as CSSProperties;
+          return (
+            <div key={i} className="place" style={place}>
+              {station}
+            </div>
+          );
+        })}
+      </div>
+    </div>
+  );
+}
+
+/** The slab's edge and the apron behind the tags, for one row of vessels. */
+function Band({ row, wideRows, narrowRows }: { row: number; wideRows: number; narrowRows: number }) {
+  const wide = row < wideRows ? '' : ' narrow-only';
+  const narrow = row < narrowRows ? '' : ' wide-only';
+  return (
+    <>
+      <div className={`slab-band${wide}${narrow}`} style={{ gridRow: row * 3 + 2 }} aria-hidden="true" />
+      <div className={`tag-band${wide}${narrow}`} style={{ gridRow: row * 3 + 3 }} aria-hidden="true" />
+    </>
+  );
+}
+
+/** A dotted line between two equal glasses whose levels stand equally high. */
+export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook }) {
+  const same = left.level_mm !== null && left.shape === right.shape && left.volume_uL === right.volume_uL;
+  if (!same) return null;
+  return (
+    <span
+      className="level-line"
+      style={{ '--level': left.level_mm! + FLOOR_MM } as CSSProperties}
+      aria-hidden="true"
+    >
+      <span>{formatMl(left.volume_uL)} each</span>
+    </span>
+  );
+}
+
+/** The whole scene in sentences. */
+export function describeScene(vessels: readonly VesselLook[], shelf: readonly string[]): string {
+  const glasses = vessels.map(describeVessel).join(' ');
+  return shelf.length === 0 ? glasses : `${glasses} On the shelf: ${shelf.join('; ')}.`;
+}

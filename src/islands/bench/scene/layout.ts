@@ -1,0 +1,39 @@
+import { measure } from '../glass/Glass';
+import type { GlassShape } from '../glass/shape';
+
+/** How the vessels stand in rows, for a wide and for a narrow bench. Widths in mm. */
+export interface SlabLayout {
+  readonly columns: number;
+  readonly rows: number;
+  /** Millimetres that the fullest row needs; the scene's scale follows from it. */
+  readonly span_mm: number;
+  readonly at: readonly { readonly column: number; readonly row: number }[];
+}
+
+const GAP_MM = 12;
+const WIDE_COLUMNS = 6;
+const NARROW_COLUMNS = 2;
+
+/** Rows of nearly equal length, at most `most` in a row. */
+function arrange(shapes: readonly GlassShape[], most: number, gap_mm: number): SlabLayout {
+  const count = Math.max(1, shapes.length);
+  const rows = Math.ceil(count / most);
+  const columns = Math.ceil(count / rows);
+  const widths = shapes.map(shape => measure(shape).width);
+  // Columns are equally wide, so the widest glass decides.
+  const span_mm = Math.max(1, columns) * (Math.max(20, ...widths) + gap_mm);
+  return {
+    columns,
+    rows,
+    span_mm: Math.round(span_mm),
+    at: shapes.map((_, i) => ({ column: (i % columns) + 1, row: Math.floor(i / columns) })),
+  };
+}
+
+export const wideLayout = (shapes: readonly GlassShape[]): SlabLayout => arrange(shapes, WIDE_COLUMNS, GAP_MM);
+
+/** On a phone two beakers stand side by side; narrow glasses stand three in a row. */
+export function narrowLayout(shapes: readonly GlassShape[]): SlabLayout {
+  const slender = shapes.every(shape => measure(shape).width < 34);
+  return arrange(shapes, slender ? NARROW_COLUMNS + 1 : NARROW_COLUMNS, GAP_MM);
+}

@@ -7,7 +7,8 @@ import '@fontsource/nunito/latin-800.css';
 import '../../../src/islands/bench/bench.css';
 import { Apron } from '../../../src/islands/bench/apron/Apron';
 import { BenchScene } from '../../../src/islands/bench/BenchScene';
-import type { GlassShape } from '../../../src/islands/bench/glass/shape';
+import { glassware, levelOf, type GlassId } from '../../../src/bench/glassware';
+import { shapeOf } from '../../../src/islands/bench/glass/shapeOf';
 import { paint } from '../../../src/islands/bench/glass/light';
 import { useHand } from '../../../src/islands/bench/hand/useHand';
 import type { ShelfLook, VesselLook } from '../../../src/islands/bench/scene/looks';
@@ -21,25 +22,21 @@ const style = document.createElement('style');
 style.textContent = '*{box-sizing:border-box}body{margin:0;font-family:Nunito;background:#f6f5f3}button{color:inherit}';
 document.head.append(style);
 
-const beaker: GlassShape = {
-  profile: [{ h: 0, r: 23.5 }, { h: 70, r: 23.5 }],
-  lip: 'spout', rounding: 5,
-  marks: [10, 20, 30, 40, 50, 60, 70, 80].map(v => ({ h: v / 1.735, from: v % 20 ? 5 : 1, to: 12 })),
-  texts: [...[20, 40, 60, 80].map(v => ({ h: v / 1.735, x: 14, text: String(v), outside: false })), { h: 63, x: 1, text: '100 mL', outside: false }],
-};
+const query = new URLSearchParams(location.search);
+const glasses = (query.get('glass') ?? 'beaker-100').split(',') as GlassId[];
 const green = { hex: '#44987f', words: 'blue-green' };
 const yellow = { hex: '#f7d656', words: 'yellow' };
-const mk = (id: string, name: string, c: { hex: string; words: string }, pH: string): VesselLook => ({
-  id, name, shape: beaker, stand: 'slab', level_mm: 55 / 1.735, volume_uL: 55000, paint: paint(c), hex: c.hex, words: c.words,
-  ph: { kind: 'value', text: pH }, temperature_C: null, unmixed: null, probe: true, stirrer: false, stirring: false, full: null,
+const levelAt = (g: GlassId, uL: number) => levelOf(glassware[g], uL / 1000) * 10 * shapeOf(g).squash;
+const mk = (id: string, name: string, c: { hex: string; words: string }, pH: string, g: GlassId): VesselLook => ({
+  id, name, shape: shapeOf(g), level_mm: levelAt(g, glassware[g].nominal_mL * 550), volume_uL: glassware[g].nominal_mL * 550, doubt: null, mixed: true, stoppered: false, paint: paint(c), hex: c.hex, words: c.words,
+  ph: { kind: 'value', text: pH }, temperature_C: null, unmixed: null, probe: !query.has('noprobe'), stirrer: false, stirring: false, full: null,
 });
 const shelf: ShelfLook[] = [
-  { id: 'hcl', name: 'Hydrochloric acid', strength: '0.10 mol/L', hazards: [], kind: 'reagent', paint: paint(null), level: 1 },
-  { id: 'naoh', name: 'Sodium hydroxide', strength: '0.10 mol/L', hazards: ['GHS05'], kind: 'reagent', paint: paint(null), level: 0.8 },
-  { id: 'bcg', name: 'Bromocresol green', strength: '0.1 %', hazards: [], kind: 'indicator', paint: paint({ hex: '#1b5e9e', words: 'blue' }), level: 0.9 },
-  { id: 'wash', name: 'Wash bottle', strength: 'boiled water', hazards: [], kind: 'wash', paint: paint(null), level: 0.9 },
+  { id: 'hcl', name: 'Hydrochloric acid', strength: '0.10 mol/L', hazards: [], kind: 'reagent', paint: paint(null), level: 1, left_uL: 1e6 },
+  { id: 'naoh', name: 'Sodium hydroxide', strength: '0.10 mol/L', hazards: ['GHS05'], kind: 'reagent', paint: paint(null), level: 0.8, left_uL: 1e6 },
+  { id: 'bcg', name: 'Bromocresol green', strength: '0.1 %', hazards: [], kind: 'indicator', paint: paint({ hex: '#1b5e9e', words: 'blue' }), level: 0.9, left_uL: 1e6 },
+  { id: 'wash', name: 'Wash bottle', strength: 'boiled water', hazards: [], kind: 'wash', paint: paint(null), level: 0.9, left_uL: 1e6 },
 ];
-const query = new URLSearchParams(location.search);
 const count = Number(query.get('n') ?? 2);
 
 function App() {
@@ -55,8 +52,8 @@ function App() {
     () => setDrops(d => d + 1),
   );
   const vessels = Array.from({ length: count }, (_, i) => {
-    const v = mk(`v${i}`, ['Water', 'Ethanoate buffer', 'Third', 'Fourth', 'Fifth', 'Sixth'][i % 6]!, i % 2 ? green : yellow, i % 2 ? '4.67' : '2.04');
-    return v.id === into ? { ...v, volume_uL: level + base, level_mm: (level + base) / 1735 } : v;
+    const v = mk(`v${i}`, ['Water', 'Ethanoate buffer', 'Third', 'Fourth', 'Fifth', 'Sixth'][i % 6]!, i % 2 ? green : yellow, i % 2 ? '4.67' : '2.04', glasses[i % glasses.length]!);
+    return v.id === into && glasses.length === 1 ? { ...v, volume_uL: level + base, level_mm: levelAt(glasses[0]!, level + base) } : v;
   });
   return (
     <div className="bench" style={{ marginLeft: innerWidth > 1000 ? 112 : 0 }}>

@@ -7,6 +7,6 @@ export default defineConfig({
   root: import.meta.dirname,
   plugins: [react()],
   css: { postcss: { plugins: [tailwindcss(tw as never)] } },
-  server: { port: 4901, host: '127.0.0.1', hmr: false, watch: null },
+  server: { port: 4901, host: '127.0.0.1', hmr: false },
   cacheDir: '/tmp/view-vite',
 });

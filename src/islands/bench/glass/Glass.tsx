@@ -1,5 +1,6 @@
 import { memo, useId, useMemo, type CSSProperties, type ReactNode } from 'react';
 import type { Paint } from './light';
+import { Stand } from './Stand';
 import { innerPath, outlinePaths, radiusAt, surfacePaths, FLOOR_MM, WALL_MM, type GlassShape } from './shape';
 
 export interface GlassProps {
@@ -58,6 +59,9 @@ export function Glass(props: GlassProps) {
   );
 }
 
+/** Tap and jet of a burette, with the space under it down to the slab. */
+const JET_MM = 24;
+
 interface Frame {
   x: number;
   y: number;
@@ -70,10 +74,10 @@ interface Frame {
 export function measure(shape: GlassShape): Frame {
   const paths = outlinePaths(shape.profile, shape.lip, shape.rounding);
   const foot = shape.foot ? shape.foot.r : 0;
-  const left = Math.min(paths.left, -foot) - 0.4;
-  const right = Math.max(paths.right, foot) + 0.4;
+  const left = Math.min(paths.left, -foot, shape.jet ? -26 : 0) - 0.4;
+  const right = Math.max(paths.right, foot, ...shape.texts.filter(text => text.outside).map(text => text.x + 6)) + 0.4;
   const y = paths.top - 0.5;
-  const bottom = FLOOR_MM + 0.3 + (shape.foot ? shape.foot.height : 0);
+  const bottom = FLOOR_MM + 0.3 + (shape.foot ? shape.foot.height : shape.jet ? JET_MM : 0);
   return { x: left, y, width: right - left, height: bottom - y, inner: innerPath(shape.profile, shape.rounding) };
 }
 
@@ -88,6 +92,14 @@ const Walls = memo(function Walls({ shape }: { shape: GlassShape }) {
           className="glass-line glass-foot"
           d={`M ${-shape.foot.r} ${FLOOR_MM + shape.foot.height} L ${-shape.foot.r} ${FLOOR_MM + shape.foot.height - 1.6} L ${-shape.profile[0]!.r - 1} ${FLOOR_MM} L ${shape.profile[0]!.r + 1} ${FLOOR_MM} L ${shape.foot.r} ${FLOOR_MM + shape.foot.height - 1.6} L ${shape.foot.r} ${FLOOR_MM + shape.foot.height} Z`}
         />
+      )}
+      {shape.jet && (
+        <>
+          <path className="glass-line glass-foot" d="M -1.8 1 V 4 H -1.2 V 12 L -0.6 17 H 0.6 L 1.2 12 V 4 H 1.8 V 1" />
+          <rect className="glass-line glass-foot" x="-3" y="4" width="6" height="4.4" rx="1" />
+          <path className="stand-clamp" d="M 3.5 6.2 H 8" />
+          <Stand top_mm={-paths.top} r_mm={brim.r} floor_mm={JET_MM} />
+        </>
       )}
       <path className="glass-inner-line" d={innerLine(shape)} />
       <path className="glass-line" d={paths.outer} />

@@ -33,6 +33,10 @@ export interface GlassShape {
   /** Rounding of the floor's edge, mm. */
   readonly rounding: number;
   readonly foot?: { readonly r: number; readonly height: number };
+  /** A tap and a jet below the floor. */
+  readonly jet?: boolean;
+  /** How far heights are squeezed: 1 for true proportions. */
+  readonly squash: number;
   readonly marks: readonly Mark[];
   readonly texts: readonly EtchedText[];
 }
@@ -60,7 +64,7 @@ export function radiusAt(profile: readonly ProfilePoint[], h: number): number {
 /** How far the floor's edge is rounded, mm: none where the profile itself closes to a point. */
 function corner(profile: readonly ProfilePoint[], rounding: number): number {
   const first = profile[0]!;
-  return Math.min(rounding, first.r * 0.6, (profile[1]?.h ?? 0) * 0.5);
+  return Math.min(rounding, first.r, (profile[1]?.h ?? 0) * 0.5);
 }
 
 /** A point of an outline; `bend` is the control point of the curve that arrives at it. */

@@ -1,10 +1,10 @@
-import { closestCenter, pointerWithin, type CollisionDetection, type KeyboardCoordinateGetter } from '@dnd-kit/core';
+import { pointerWithin, type CollisionDetection, type KeyboardCoordinateGetter } from '@dnd-kit/core';
 
-/** Under a pointer: the vessel that it is in. By keys: the nearest vessel, once the bottle has left the shelf. */
+/** Under a pointer: the vessel that it is in. By keys: the vessel that the bottle's middle is in. */
 export const overVessel: CollisionDetection = args => {
   if (args.pointerCoordinates) return pointerWithin(args);
-  const moved = args.collisionRect.top !== args.active.rect.current.initial?.top;
-  return moved ? closestCenter(args).slice(0, 1) : [];
+  const { left, top, width, height } = args.collisionRect;
+  return pointerWithin({ ...args, pointerCoordinates: { x: left + width / 2, y: top + height / 2 } });
 };
 
 const FORWARD = new Set(['ArrowRight', 'ArrowDown']);

@@ -23,6 +23,7 @@ export function Scene({ id, title, lead, words, shelf, shapes, stations, descrip
     '--narrow-columns': narrow.columns,
     '--wide-span': wide.span_mm,
     '--narrow-span': narrow.span_mm,
+    '--tall': wide.tall_mm,
   } as CSSProperties;
   return (
     <div className="scene" style={variables} data-vessels={shapes.length}>
@@ -75,7 +76,7 @@ function Band({ row, wideRows, narrowRows }: { row: number; wideRows: number; na
 
 /** A dotted line between two equal glasses whose levels stand equally high. */
 export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook }) {
-  const same = left.level_mm !== null && left.shape === right.shape && left.volume_uL === right.volume_uL;
+  const same = left.level_mm !== null && left.volume_uL !== null && left.shape === right.shape && left.volume_uL === right.volume_uL;
   if (!same) return null;
   return (
     <span
@@ -83,7 +84,7 @@ export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook
       style={{ '--level': left.level_mm! + FLOOR_MM } as CSSProperties}
       aria-hidden="true"
     >
-      <span>{formatMl(left.volume_uL)} each</span>
+      <span>{formatMl(left.volume_uL!)} each</span>
     </span>
   );
 }

@@ -36,7 +36,8 @@ interface StationProps {
   beside: ReactNode;
 }
 
-const UNDER_RIM_MM = 3;
+/** Where a tipped bottle's lip and a dropper's tip stand above the rim. */
+const OVER_RIM_MM = 13;
 
 /** One vessel on the slab: glass, name tape, reading tag, and whatever is held over it. */
 export function Station(props: StationProps) {
@@ -87,10 +88,11 @@ export function Station(props: StationProps) {
     },
   };
 
+  const fall = `M ${entryX} ${-rim - OVER_RIM_MM} V ${-(vessel.level_mm ?? 0) + 0.6}`;
   const frame = measure(vessel.shape);
   const lip = {
     '--lip-x': `${((entryX - frame.x) / frame.width) * 100}%`,
-    '--lip-y': `${((-rim - UNDER_RIM_MM - frame.y) / frame.height) * 100}%`,
+    '--lip-y': `${((-rim - OVER_RIM_MM - frame.y) / frame.height) * 100}%`,
   } as CSSProperties;
   const says = `${props.benchId}-${vessel.id}-says`;
 
@@ -124,19 +126,18 @@ export function Station(props: StationProps) {
             inside={vessel.stirrer ? <StirBar turning={vessel.stirring} /> : undefined}
             over={
               <>
-                {vessel.probe && <Probe x={-profile[0]!.r * 0.62} foot_mm={7} length_mm={rim - 4} />}
+                {vessel.probe && <Probe x={-Math.max(0, Math.min(profile[0]!.r * 0.62, profile[profile.length - 1]!.r - 3.4))} foot_mm={7} length_mm={rim - 4} />}
                 {stream && (
-                  <path
-                    className="stream"
-                    d={`M ${entryX} ${-rim - UNDER_RIM_MM} V ${-(vessel.level_mm ?? 0) + 0.6}`}
-                    stroke={over!.paint.fill}
-                  />
+                  <>
+                    <path className="stream-edge" d={fall} />
+                    <path className="stream" d={fall} stroke={over!.paint.fill} />
+                  </>
                 )}
                 {dripping && dripping.drops > 0 && (
-                  <g key={dripping.drops} transform={`translate(${entryX} ${-rim - UNDER_RIM_MM})`}>
+                  <g key={dripping.drops} transform={`translate(${entryX} ${-rim - OVER_RIM_MM})`}>
                     <g
                       className="falling"
-                      style={{ '--fall': `${rim + UNDER_RIM_MM - 4 - (vessel.level_mm ?? 0)}px` } as CSSProperties}
+                      style={{ '--fall': `${rim + OVER_RIM_MM - 4 - (vessel.level_mm ?? 0)}px` } as CSSProperties}
                     >
                       <Drop liquid={dripping.paint} />
                     </g>

@@ -26,7 +26,8 @@ export function Tag({ vessel, side, settling }: { vessel: VesselLook; side: 'lef
           {vessel.words}
         </p>
       )}
-      {vessel.unmixed && <p className="tag-quiet">not mixed</p>}
+      {!vessel.mixed && <p className="tag-quiet">not mixed</p>}
+      {vessel.doubt && vessel.mixed && <p className="tag-quiet">{vessel.doubt}</p>}
       {side !== 'under' && <span className="leader" aria-hidden="true" />}
       {vessel.temperature_C !== null && <p className="tag-quiet">{vessel.temperature_C.toFixed(1)} °C</p>}
     </div>

@@ -7,6 +7,8 @@ export interface SlabLayout {
   readonly rows: number;
   /** Millimetres that the fullest row needs; the scene's scale follows from it. */
   readonly span_mm: number;
+  /** The tallest glass, mm. */
+  readonly tall_mm: number;
   readonly at: readonly { readonly column: number; readonly row: number }[];
 }
 
@@ -22,10 +24,12 @@ function arrange(shapes: readonly GlassShape[], most: number, gap_mm: number): S
   const widths = shapes.map(shape => measure(shape).width);
   // Columns are equally wide, so the widest glass decides.
   const span_mm = Math.max(1, columns) * (Math.max(20, ...widths) + gap_mm);
+  const tall_mm = Math.max(20, ...shapes.map(shape => measure(shape).height));
   return {
     columns,
     rows,
     span_mm: Math.round(span_mm),
+    tall_mm: Math.round(tall_mm),
     at: shapes.map((_, i) => ({ column: (i % columns) + 1, row: Math.floor(i / columns) })),
   };
 }

@@ -15,19 +15,23 @@ export interface VesselLook {
   readonly id: string;
   readonly name: string;
   readonly shape: GlassShape;
-  readonly stand: 'slab' | 'burette';
   readonly level_mm: number | null;
-  readonly volume_uL: number;
+  /** Null where the bench hides it. */
+  readonly volume_uL: number | null;
   readonly paint: Paint;
   readonly hex: string;
   /** Colour in words; empty for an empty vessel, or where the bench hides it. */
   readonly words: string;
   readonly ph: PhReading;
+  /** Why the probe's number is not to be trusted. */
+  readonly doubt: string | null;
   readonly temperature_C: number | null;
-  readonly unmixed: { readonly paint: Paint; readonly depth: number } | null;
+  readonly unmixed: { readonly paint: Paint; readonly words: string; readonly depth: number } | null;
+  readonly mixed: boolean;
   readonly probe: boolean;
   readonly stirrer: boolean;
   readonly stirring: boolean;
+  readonly stoppered: boolean;
   /** Height and words of the brim line, when the vessel is full. */
   readonly full: { readonly h: number; readonly text: string } | null;
 }
@@ -38,6 +42,7 @@ export interface ShelfLook extends BottleLook {
   readonly paint: Paint;
   /** Share of its first volume that is left. */
   readonly level: number;
+  readonly left_uL: number;
 }
 
 /** '4.67', with a true minus. */
@@ -49,11 +54,12 @@ export const formatMl = (volume_uL: number): string => `${(volume_uL / 1000).toF
 /** What a vessel shows, as one sentence for those who do not see the drawing. */
 export function describeVessel(vessel: VesselLook): string {
   if (vessel.level_mm === null) return `${vessel.name}: empty.`;
-  const parts = [formatMl(vessel.volume_uL)];
+  const parts = vessel.volume_uL === null ? [] : [formatMl(vessel.volume_uL)];
   if (vessel.ph.kind === 'value') parts.push(`pH ${vessel.ph.text}`);
   if (vessel.ph.kind === 'hidden') parts.push(vessel.ph.sentence.replace(/\.$/, '').toLowerCase());
   if (vessel.words) parts.push(vessel.words);
-  if (vessel.unmixed) parts.push('not mixed');
+  if (!vessel.mixed) parts.push(vessel.unmixed ? `not mixed, ${vessel.unmixed.words} where it came in` : 'not mixed');
+  if (vessel.stoppered) parts.push('stoppered');
   if (vessel.stirring) parts.push('stirring');
   if (vessel.full) parts.push('full');
   return `${vessel.name}: ${parts.join(', ')}.`;

@@ -194,8 +194,9 @@ function say(series: readonly TraceSeries[]): string {
     .map(one => {
       const first = one.points[0]!;
       const end = one.points[one.points.length - 1]!;
-      if (one.points.length === 1) return `${one.name} starts at pH ${first.pH.toFixed(2)}.`;
-      return `${one.name} goes from pH ${first.pH.toFixed(2)} to ${end.pH.toFixed(2)} with ${end.x_mL.toFixed(2)} mL added.`;
+      const name = one.name.charAt(0).toUpperCase() + one.name.slice(1);
+      if (one.points.length === 1) return `${name} starts at pH ${first.pH.toFixed(2)}.`;
+      return `${name} goes from pH ${first.pH.toFixed(2)} to ${end.pH.toFixed(2)} with ${end.x_mL.toFixed(2)} mL added.`;
     })
     .join(' ');
 }

@@ -7,7 +7,7 @@ export function reading(vessel: VesselLook): string {
   if (vessel.ph.kind === 'value') parts.push(`pH ${vessel.ph.text}`);
   if (vessel.ph.kind === 'hidden') parts.push(vessel.ph.sentence.replace(/\.$/, ''));
   if (vessel.words) parts.push(vessel.words);
-  if (vessel.unmixed) parts.push('not mixed');
+  if (!vessel.mixed) parts.push('not mixed');
   return parts.join(', ');
 }
 

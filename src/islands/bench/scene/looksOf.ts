@@ -1,0 +1,78 @@
+import { glassware, levelOf } from '../../../bench/glassware';
+import type { BenchSpec, BottleReading, ShelfItem, VesselReading } from '../../../bench/types';
+import { paint } from '../glass/light';
+import { shapeOf } from '../glass/shapeOf';
+import { formatPh, type PhReading, type ShelfLook, type VesselLook } from './looks';
+
+/** Why a vessel's pH is not told, in one sentence. */
+function hiddenSentence(spec: BenchSpec, vessel: string): string {
+  const rule = spec.hide?.find(hide => hide.what.includes('pH') && (hide.of === undefined || hide.of.includes(vessel)));
+  if (rule?.until === 'prediction') return 'Hidden until you predict';
+  if (rule?.until === 'never') return 'Hidden on this bench';
+  return 'Hidden for now';
+}
+
+function phOf(spec: BenchSpec, reading: VesselReading): PhReading {
+  if (reading.hidden.includes('pH')) return { kind: 'hidden', sentence: hiddenSentence(spec, reading.id) };
+  return reading.pH === undefined ? { kind: 'none' } : { kind: 'value', text: formatPh(reading.pH) };
+}
+
+/** What is drawn of one vessel; the same object for the same reading, so that still vessels are not drawn again. */
+const vessels = new WeakMap<VesselReading, VesselLook>();
+
+export function vesselLook(spec: BenchSpec, reading: VesselReading): VesselLook {
+  const known = vessels.get(reading);
+  if (known) return known;
+  const glass = glassware[reading.glass];
+  const shape = shapeOf(reading.glass);
+  const plan = spec.vessels.find(vessel => vessel.id === reading.id);
+  const brim = levelOf(glass, glass.capacity_mL) * 10 * shape.squash;
+  const look: VesselLook = {
+    id: reading.id,
+    name: reading.label,
+    shape,
+    level_mm: reading.empty ? null : Math.min(brim, reading.level_cm * 10 * shape.squash),
+    volume_uL: reading.volume_mL === undefined ? null : Math.round(reading.volume_mL * 1000),
+    paint: paint(reading.colour),
+    hex: reading.colour?.hex ?? '#ffffff',
+    words: reading.empty ? '' : (reading.colour?.words ?? ''),
+    ph: phOf(spec, reading),
+    doubt: reading.doubt ?? null,
+    temperature_C: reading.temperature_C ?? null,
+    // The region's depth on the drawing grows with its share; a sliver would not be seen.
+    unmixed: reading.layer ? { paint: paint(reading.layer), words: reading.layer.words, depth: 0.35 + 0.6 * Math.min(1, reading.layer.share) } : null,
+    mixed: reading.mixed,
+    probe: reading.probe,
+    stirrer: plan?.stirrer !== undefined,
+    stirring: reading.stirring,
+    stoppered: reading.stoppered,
+    full: reading.full ? { h: brim, text: `Full at ${glass.capacity_mL.toFixed(1)} mL` } : null,
+  };
+  vessels.set(reading, look);
+  return look;
+}
+
+const bottles = new WeakMap<BottleReading, ShelfLook>();
+
+function firstVolume(item: ShelfItem | undefined): number {
+  return item?.contents?.volume_mL ?? item?.indicator?.volume_mL ?? 0;
+}
+
+/** What is drawn of one bottle. `hazards` are the marks that its concentration carries. */
+export function shelfLook(spec: BenchSpec, reading: BottleReading, hazards: readonly string[]): ShelfLook {
+  const known = bottles.get(reading);
+  if (known) return known;
+  const first = firstVolume(spec.shelf.find(item => item.id === reading.id));
+  const look: ShelfLook = {
+    id: reading.id,
+    name: reading.label,
+    strength: reading.concentration ?? '',
+    hazards,
+    kind: reading.kind === 'standard' ? 'reagent' : reading.kind,
+    paint: paint(reading.colour),
+    level: reading.empty ? 0 : first > 0 ? Math.min(1, reading.left_mL / first) : 1,
+    left_uL: Math.round(reading.left_mL * 1000),
+  };
+  bottles.set(reading, look);
+  return look;
+}

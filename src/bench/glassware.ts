@@ -8,7 +8,7 @@
  */
 
 export type GlassFamily =
-  | 'beaker' | 'conical' | 'test-tube' | 'cylinder' | 'volumetric' | 'burette' | 'pipette' | 'waste';
+  'beaker' | 'conical' | 'test-tube' | 'cylinder' | 'volumetric' | 'burette' | 'pipette' | 'waste';
 
 /** One stretch of a round glass from the bottom up: straight or conical walls. Centimetres, inner. */
 export interface Stretch {
@@ -29,7 +29,12 @@ export interface Glass {
   readonly profile: readonly Stretch[];
   readonly headroom_cm: number;
   /** Marks, mL: every `step` from `first` to `last`, a number at every `numbered`. */
-  readonly marks: { readonly first_mL: number; readonly last_mL: number; readonly step_mL: number; readonly numbered_mL: number } | null;
+  readonly marks: {
+    readonly first_mL: number;
+    readonly last_mL: number;
+    readonly step_mL: number;
+    readonly numbered_mL: number;
+  } | null;
   /** A burette's scale counts down: its zero is at the top. */
   readonly scaleFromTop: boolean;
   /** How finely a level is read, mL (half a division; burettes to 0.05). */
@@ -47,34 +52,75 @@ const area = (d: number) => (Math.PI * d * d) / 4;
 /** Height of a straight cylinder of this inner width that holds so much. */
 const tall = (volume_mL: number, d: number) => volume_mL / area(d);
 
-const straight = (volume_mL: number, d: number): Stretch[] => [{ height_cm: tall(volume_mL, d), from_cm: d, to_cm: d }];
+const straight = (volume_mL: number, d: number): Stretch[] => [
+  { height_cm: tall(volume_mL, d), from_cm: d, to_cm: d },
+];
 
-type Row = Omit<Glass, 'id' | 'nominal_mL' | 'narrow' | 'canSwirl' | 'canStopper' | 'scaleFromTop' | 'tolerance_share' | 'tolerance_mL'> &
-  Partial<Pick<Glass, 'narrow' | 'canSwirl' | 'canStopper' | 'scaleFromTop' | 'tolerance_mL' | 'tolerance_share' | 'nominal_mL'>>;
+type Row = Omit<
+  Glass,
+  | 'id'
+  | 'nominal_mL'
+  | 'narrow'
+  | 'canSwirl'
+  | 'canStopper'
+  | 'scaleFromTop'
+  | 'tolerance_share'
+  | 'tolerance_mL'
+> &
+  Partial<
+    Pick<
+      Glass,
+      | 'narrow'
+      | 'canSwirl'
+      | 'canStopper'
+      | 'scaleFromTop'
+      | 'tolerance_mL'
+      | 'tolerance_share'
+      | 'nominal_mL'
+    >
+  >;
 
 const beaker = (nominal: number, width: number, step: number, numbered: number): Row => ({
-  family: 'beaker', name: `${nominal} mL beaker`, nominal_mL: nominal, capacity_mL: nominal,
-  profile: straight(nominal, width), headroom_cm: 1.1,
+  family: 'beaker',
+  name: `${nominal} mL beaker`,
+  nominal_mL: nominal,
+  capacity_mL: nominal,
+  profile: straight(nominal, width),
+  headroom_cm: 1.1,
   marks: { first_mL: step, last_mL: nominal, step_mL: step, numbered_mL: numbered },
-  readTo_mL: step / 2, tolerance_share: 0.05, canSwirl: true,
+  readTo_mL: step / 2,
+  tolerance_share: 0.05,
+  canSwirl: true,
 });
 
 /** A cone that ends in a neck: the height of the cone follows from its volume. */
 const conical = (nominal: number, base: number, neck: number, step: number, numbered: number): Row => {
   const cone = (12 * nominal * 1.05) / (Math.PI * (base * base + base * neck + neck * neck));
   return {
-    family: 'conical', name: `${nominal} mL conical flask`, nominal_mL: nominal, capacity_mL: nominal,
-    profile: [{ height_cm: cone, from_cm: base, to_cm: neck }], headroom_cm: 2.4,
+    family: 'conical',
+    name: `${nominal} mL conical flask`,
+    nominal_mL: nominal,
+    capacity_mL: nominal,
+    profile: [{ height_cm: cone, from_cm: base, to_cm: neck }],
+    headroom_cm: 2.4,
     marks: { first_mL: step, last_mL: nominal * 0.8, step_mL: step, numbered_mL: numbered },
-    readTo_mL: step / 2, tolerance_share: 0.05, canSwirl: true, canStopper: true,
+    readTo_mL: step / 2,
+    tolerance_share: 0.05,
+    canSwirl: true,
+    canStopper: true,
   };
 };
 
 const cylinder = (nominal: number, width: number, step: number, numbered: number, a: number): Row => ({
-  family: 'cylinder', name: `${nominal} mL measuring cylinder`, nominal_mL: nominal, capacity_mL: nominal * 1.08,
-  profile: straight(nominal * 1.08, width), headroom_cm: 1.6,
+  family: 'cylinder',
+  name: `${nominal} mL measuring cylinder`,
+  nominal_mL: nominal,
+  capacity_mL: nominal * 1.08,
+  profile: straight(nominal * 1.08, width),
+  headroom_cm: 1.6,
   marks: { first_mL: step, last_mL: nominal, step_mL: step, numbered_mL: numbered },
-  readTo_mL: step / 2, tolerance_mL: { A: a, B: 2 * a },
+  readTo_mL: step / 2,
+  tolerance_mL: { A: a, B: 2 * a },
 });
 
 /** A round belly stands for the bulb; the neck above the mark is narrow, so a millilitre too much is seen. */
@@ -82,20 +128,39 @@ const volumetric = (nominal: number, belly: number, neck: number, a: number): Ro
   const below = nominal * 0.97;
   const spare = nominal * 0.05;
   return {
-    family: 'volumetric', name: `${nominal} mL volumetric flask`, nominal_mL: nominal, capacity_mL: nominal + spare,
+    family: 'volumetric',
+    name: `${nominal} mL volumetric flask`,
+    nominal_mL: nominal,
+    capacity_mL: nominal + spare,
     profile: [
-      { height_cm: (12 * below) / (Math.PI * (belly * belly + belly * neck + neck * neck)), from_cm: belly, to_cm: neck },
+      {
+        height_cm: (12 * below) / (Math.PI * (belly * belly + belly * neck + neck * neck)),
+        from_cm: belly,
+        to_cm: neck,
+      },
       { height_cm: tall(nominal - below + spare, neck), from_cm: neck, to_cm: neck },
     ],
-    headroom_cm: 1.5, marks: { first_mL: nominal, last_mL: nominal, step_mL: nominal, numbered_mL: nominal },
-    readTo_mL: 0.05, tolerance_mL: { A: a, B: 2 * a }, narrow: true, canSwirl: true, canStopper: true,
+    headroom_cm: 1.5,
+    marks: { first_mL: nominal, last_mL: nominal, step_mL: nominal, numbered_mL: nominal },
+    readTo_mL: 0.05,
+    tolerance_mL: { A: a, B: 2 * a },
+    narrow: true,
+    canSwirl: true,
+    canStopper: true,
   };
 };
 
 const pipette = (nominal: number, a: number): Row => ({
-  family: 'pipette', name: `${nominal} mL pipette`, nominal_mL: nominal, capacity_mL: nominal,
-  profile: straight(nominal, 1.2), headroom_cm: 3, marks: { first_mL: nominal, last_mL: nominal, step_mL: nominal, numbered_mL: nominal },
-  readTo_mL: nominal, tolerance_mL: { A: a, B: 2 * a }, narrow: true,
+  family: 'pipette',
+  name: `${nominal} mL pipette`,
+  nominal_mL: nominal,
+  capacity_mL: nominal,
+  profile: straight(nominal, 1.2),
+  headroom_cm: 3,
+  marks: { first_mL: nominal, last_mL: nominal, step_mL: nominal, numbered_mL: nominal },
+  readTo_mL: nominal,
+  tolerance_mL: { A: a, B: 2 * a },
+  narrow: true,
 });
 
 const rows = {
@@ -106,8 +171,18 @@ const rows = {
   'conical-100': conical(100, 6.0, 2.0, 20, 20),
   'conical-250': conical(250, 8.0, 3.0, 25, 50),
   'test-tube': {
-    family: 'test-tube', name: 'test tube', nominal_mL: 20, capacity_mL: 20, profile: straight(20, 1.6), headroom_cm: 2,
-    marks: null, readTo_mL: 0.5, tolerance_share: 0.05, narrow: true, canSwirl: true, canStopper: true,
+    family: 'test-tube',
+    name: 'test tube',
+    nominal_mL: 20,
+    capacity_mL: 20,
+    profile: straight(20, 1.6),
+    headroom_cm: 2,
+    marks: null,
+    readTo_mL: 0.5,
+    tolerance_share: 0.05,
+    narrow: true,
+    canSwirl: true,
+    canStopper: true,
   },
   'cylinder-10': cylinder(10, 1.2, 0.2, 1, 0.1),
   'cylinder-25': cylinder(25, 1.8, 0.5, 5, 0.17),
@@ -117,8 +192,15 @@ const rows = {
   'volumetric-100': volumetric(100, 6.2, 1.2, 0.1),
   'volumetric-250': volumetric(250, 8.4, 1.5, 0.15),
   'burette-50': {
-    family: 'burette', name: '50 mL burette', nominal_mL: 50, capacity_mL: 52, profile: straight(52, 1.1), headroom_cm: 2,
-    marks: { first_mL: 0, last_mL: 50, step_mL: 0.1, numbered_mL: 1 }, scaleFromTop: true, readTo_mL: 0.05,
+    family: 'burette',
+    name: '50 mL burette',
+    nominal_mL: 50,
+    capacity_mL: 52,
+    profile: straight(52, 1.1),
+    headroom_cm: 2,
+    marks: { first_mL: 0, last_mL: 50, step_mL: 0.1, numbered_mL: 1 },
+    scaleFromTop: true,
+    readTo_mL: 0.05,
     tolerance_mL: { A: 0.05, B: 0.1 },
   },
   'pipette-5': pipette(5, 0.01),
@@ -126,8 +208,15 @@ const rows = {
   'pipette-25': pipette(25, 0.03),
   'pipette-50': pipette(50, 0.05),
   waste: {
-    family: 'waste', name: 'waste bottle', nominal_mL: 2000, capacity_mL: 2000, profile: straight(2000, 12), headroom_cm: 2,
-    marks: null, readTo_mL: 50, tolerance_share: 0.05,
+    family: 'waste',
+    name: 'waste bottle',
+    nominal_mL: 2000,
+    capacity_mL: 2000,
+    profile: straight(2000, 12),
+    headroom_cm: 2,
+    marks: null,
+    readTo_mL: 50,
+    tolerance_share: 0.05,
   },
 } satisfies Record<string, Row>;
 
@@ -137,8 +226,15 @@ export const glassware: Readonly<Record<GlassId, Glass>> = Object.fromEntries(
   Object.entries(rows).map(([id, row]: [string, Row]) => [
     id,
     {
-      narrow: false, canSwirl: false, canStopper: false, scaleFromTop: false, tolerance_mL: null, tolerance_share: null,
-      nominal_mL: row.capacity_mL, ...row, id: id as GlassId,
+      narrow: false,
+      canSwirl: false,
+      canStopper: false,
+      scaleFromTop: false,
+      tolerance_mL: null,
+      tolerance_share: null,
+      nominal_mL: row.capacity_mL,
+      ...row,
+      id: id as GlassId,
     },
   ]),
 ) as Record<GlassId, Glass>;
@@ -178,7 +274,8 @@ export function widthAt(glass: Glass, height_cm: number): number {
   let below = 0;
   let width = 0;
   for (const s of glass.profile) {
-    if (height_cm <= below + s.height_cm) return s.from_cm + ((s.to_cm - s.from_cm) * (height_cm - below)) / s.height_cm;
+    if (height_cm <= below + s.height_cm)
+      return s.from_cm + ((s.to_cm - s.from_cm) * (height_cm - below)) / s.height_cm;
     below += s.height_cm;
     width = s.to_cm;
   }
@@ -194,7 +291,8 @@ export function pathOf(glass: Glass, volume_mL: number): number {
 }
 
 /** Whole height of the inner wall with its rim, cm. */
-export const heightOf = (glass: Glass): number => glass.profile.reduce((sum, s) => sum + s.height_cm, glass.headroom_cm);
+export const heightOf = (glass: Glass): number =>
+  glass.profile.reduce((sum, s) => sum + s.height_cm, glass.headroom_cm);
 
 /** All marks of a glass, mL, from the bottom up (burette: as volumes run out, 0 at the top). */
 export function marksOf(glass: Glass): readonly { readonly mL: number; readonly numbered: boolean }[] {

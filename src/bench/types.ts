@@ -112,7 +112,8 @@ export interface BenchSpec {
   readonly safety?: { readonly goggles?: 'first' | 'advised'; readonly gloves?: 'first' | 'advised' };
 }
 
-export type FairnessTopic = 'contents' | 'concentration' | 'volume' | 'indicator' | 'temperature' | 'starting-pH';
+export type FairnessTopic =
+  'contents' | 'concentration' | 'volume' | 'indicator' | 'temperature' | 'starting-pH';
 
 // ---------------------------------------------------------------- aims
 
@@ -132,12 +133,40 @@ export type AimSpec = AimBase &
     | { readonly kind: 'pH'; readonly vessel: string; readonly min?: number; readonly max?: number }
     | { readonly kind: 'colour'; readonly vessel: string; readonly words: readonly string[] }
     | { readonly kind: 'volume'; readonly vessel: string; readonly min_mL?: number; readonly max_mL?: number }
-    | { readonly kind: 'temperature'; readonly vessel: string; readonly min_C?: number; readonly max_C?: number }
-    | { readonly kind: 'added'; readonly vessel: string; readonly of: string; readonly min_mL?: number; readonly max_mL?: number }
-    | { readonly kind: 'drops'; readonly vessel: string; readonly of: string; readonly min?: number; readonly max?: number }
+    | {
+        readonly kind: 'temperature';
+        readonly vessel: string;
+        readonly min_C?: number;
+        readonly max_C?: number;
+      }
+    | {
+        readonly kind: 'added';
+        readonly vessel: string;
+        readonly of: string;
+        readonly min_mL?: number;
+        readonly max_mL?: number;
+      }
+    | {
+        readonly kind: 'drops';
+        readonly vessel: string;
+        readonly of: string;
+        readonly min?: number;
+        readonly max?: number;
+      }
     /** Conjugate base : weak acid of one family, by amounts. */
-    | { readonly kind: 'ratio'; readonly vessel: string; readonly family: string; readonly min?: number; readonly max?: number }
-    | { readonly kind: 'equal'; readonly quantity: 'pH' | 'volume' | 'temperature'; readonly vessels: readonly [string, string]; readonly within: number }
+    | {
+        readonly kind: 'ratio';
+        readonly vessel: string;
+        readonly family: string;
+        readonly min?: number;
+        readonly max?: number;
+      }
+    | {
+        readonly kind: 'equal';
+        readonly quantity: 'pH' | 'volume' | 'temperature';
+        readonly vessels: readonly [string, string];
+        readonly within: number;
+      }
     /** CIEDE2000 between two vessels at most `within`. */
     | { readonly kind: 'same-colour'; readonly vessels: readonly [string, string]; readonly within?: number }
     | { readonly kind: 'calibrated' }
@@ -147,7 +176,12 @@ export type AimSpec = AimBase &
     /** A move of this kind was done (on this vessel), so often. */
     | { readonly kind: 'did'; readonly move: MoveKind; readonly vessel?: string; readonly times?: number }
     /** Met once all aims named in `with` are met while no more than so much is used. */
-    | { readonly kind: 'used-at-most'; readonly of: string; readonly max_mL: number; readonly with: readonly string[] }
+    | {
+        readonly kind: 'used-at-most';
+        readonly of: string;
+        readonly max_mL: number;
+        readonly with: readonly string[];
+      }
   );
 
 // ---------------------------------------------------------------- moves
@@ -161,13 +195,24 @@ export type Move =
   /** Until the liquid in `into` stands at a graduation mark. */
   | { readonly kind: 'pourToMark'; readonly from: string; readonly into: string; readonly mark_mL: number }
   | { readonly kind: 'drip'; readonly from: string; readonly into: string; readonly drops: number }
-  | { readonly kind: 'addToBoth'; readonly from: string; readonly into: readonly [string, string]; readonly volume_uL?: number; readonly drops?: number }
+  | {
+      readonly kind: 'addToBoth';
+      readonly from: string;
+      readonly into: readonly [string, string];
+      readonly volume_uL?: number;
+      readonly drops?: number;
+    }
   /** From a burette: its tap opened until so much has run out. */
   | { readonly kind: 'dispense'; readonly burette: string; readonly into: string; readonly volume_uL: number }
   | { readonly kind: 'pipette'; readonly pipette: string; readonly from: string; readonly into: string }
   /** A bottle's liquid up to the zero mark of a burette or the top mark of measuring glass. */
   | { readonly kind: 'fill'; readonly from: string; readonly into: string }
-  | { readonly kind: 'addIndicator'; readonly indicator: string; readonly into: string; readonly drops: number }
+  | {
+      readonly kind: 'addIndicator';
+      readonly indicator: string;
+      readonly into: string;
+      readonly drops: number;
+    }
   | { readonly kind: 'swirl'; readonly vessel: string }
   | { readonly kind: 'stir'; readonly vessel: string; readonly on: boolean }
   | { readonly kind: 'dipProbe'; readonly vessel: string }
@@ -175,7 +220,12 @@ export type Move =
   | { readonly kind: 'rinseProbe' }
   | { readonly kind: 'calibrate'; readonly value_pH: number }
   | { readonly kind: 'setTemperature'; readonly vessel: string; readonly temperature_C: number }
-  | { readonly kind: 'bubble'; readonly vessel: string; readonly gas: 'air' | 'co2' | 'nitrogen'; readonly seconds: number }
+  | {
+      readonly kind: 'bubble';
+      readonly vessel: string;
+      readonly gas: 'air' | 'co2' | 'nitrogen';
+      readonly seconds: number;
+    }
   | { readonly kind: 'stopper'; readonly vessel: string; readonly on: boolean }
   | { readonly kind: 'wear'; readonly what: 'goggles' | 'gloves'; readonly on: boolean }
   | { readonly kind: 'rinse'; readonly vessel: string; readonly with: string }
@@ -192,9 +242,27 @@ export type MoveOf<K extends MoveKind> = Extract<Move, { kind: K }>;
 /** Why a move can't be done, and what to do instead. */
 export interface Refusal {
   readonly code:
-    | 'unknown-thing' | 'unknown-move' | 'bad-value' | 'wrong-vessel' | 'same-vessel' | 'overflow' | 'bottle-empty'
-    | 'vessel-empty' | 'stoppered' | 'goggles-first' | 'gloves-first' | 'no-probe' | 'not-offered' | 'nothing-to-undo'
-    | 'cannot-unpour' | 'nothing-to-wipe' | 'no-such-mark' | 'already-so' | 'calibration-failed' | 'run-full' | 'wipe-first';
+    | 'unknown-thing'
+    | 'unknown-move'
+    | 'bad-value'
+    | 'wrong-vessel'
+    | 'same-vessel'
+    | 'overflow'
+    | 'bottle-empty'
+    | 'vessel-empty'
+    | 'stoppered'
+    | 'goggles-first'
+    | 'gloves-first'
+    | 'no-probe'
+    | 'not-offered'
+    | 'nothing-to-undo'
+    | 'cannot-unpour'
+    | 'nothing-to-wipe'
+    | 'no-such-mark'
+    | 'already-so'
+    | 'calibration-failed'
+    | 'run-full'
+    | 'wipe-first';
   readonly sentence: string;
   /** For 'overflow' and 'bottle-empty': how much would go, in whole microlitres. */
   readonly possible_uL?: number;
@@ -265,8 +333,7 @@ export interface Notice {
 }
 
 export type Outcome =
-  | { readonly ok: true; readonly state: BenchState }
-  | { readonly ok: false; readonly refusal: Refusal };
+  { readonly ok: true; readonly state: BenchState } | { readonly ok: false; readonly refusal: Refusal };
 
 /** What the reader of a bench has already earned; decides what stays hidden. */
 export interface Seen {
@@ -329,7 +396,11 @@ export interface Readings {
   readonly vessels: readonly VesselReading[];
   readonly bottles: readonly BottleReading[];
   readonly waste: { readonly volume_mL: number; readonly pH?: number; readonly sentence: string };
-  readonly spills: readonly { readonly from: string; readonly volume_mL: number; readonly sentence: string }[];
+  readonly spills: readonly {
+    readonly from: string;
+    readonly volume_mL: number;
+    readonly sentence: string;
+  }[];
   readonly meter?: { readonly at: string | null; readonly calibrated: boolean; readonly rinsed: boolean };
   readonly goggles: boolean;
   readonly gloves: boolean;

@@ -1,5 +1,5 @@
 /** Aims: which are met by the state after a completed move. Judged on displayed precision; once met they stay met. */
-import { differ, pairs } from '../chemistry/index.ts';
+import { pairsOf } from './pairs.ts';
 import { lastStanding } from './apply.ts';
 import { buretteReading, glassware, pathOf } from './glassware.ts';
 import { colourOf, solve } from './liquid.ts';
@@ -56,9 +56,14 @@ const temperatureIn = (state: BenchState, id: string): number | null => {
 function ratioIn(state: BenchState, id: string, family: string): number | null {
   const vessel = settled(state, id);
   if (!vessel) return null;
-  const found = pairs(vessel.liquid, solve(vessel.liquid, state.spec.model)).find((p) => p.family === family);
-  if (!found || !(found.acid_mmol > 0)) return null;
-  return shown(found.base_mmol / found.acid_mmol, 2);
+  const found = pairsOf(vessel.liquid, state.spec.model).filter(
+    (p) => p.family === family && p.acid_mmol > 0,
+  );
+  const nearest = found.reduce<number | null>((best, p) => {
+    const ratio = p.base_mmol / p.acid_mmol;
+    return best === null || Math.abs(Math.log(ratio)) < Math.abs(Math.log(best)) ? ratio : best;
+  }, null);
+  return nearest === null ? null : shown(nearest, 2);
 }
 
 const quantity = { pH: pHOf, volume: volumeIn, temperature: temperatureIn } as const;
@@ -113,10 +118,6 @@ function holds(state: BenchState, aim: AimSpec, met: ReadonlySet<string>): boole
     case 'equal': {
       const [a, b] = aim.vessels.map((id) => quantity[aim.quantity](state, id));
       return a != null && b != null && shown(Math.abs(a - b), decimals[aim.quantity]) <= aim.within;
-    }
-    case 'same-colour': {
-      const [a, b] = aim.vessels.map((id) => colourIn(state, id));
-      return !!a && !!b && shown(differ(a, b, 'normal'), 1) <= (aim.within ?? 5);
     }
     case 'calibrated':
       return meterTrue(state);

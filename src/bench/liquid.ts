@@ -117,10 +117,10 @@ export function bottleOf(item: ShelfItem, bench_C: number, seed: number): Soluti
   return liquidOf(item.contents, bench_C, seed, item.id);
 }
 
-/** Concentration of a species, mol/L. */
-export function concentrationOf(liquid: Solution, model: Model, name: string): number {
+/** Concentration of H3O+ (charge 1) or OH- (charge -1), mol/L. */
+export function concentrationOf(liquid: Solution, model: Model, charge: 1 | -1): number {
   if (liquid.volume_nL === 0) return 0;
-  const species = solve(liquid, model).species.find((s) => s.name === name);
+  const species = solve(liquid, model).species.find((s) => s.component === 'water' && s.charge === charge);
   return species ? species.amount_mol / (liquid.volume_nL / NL / 1000) : 0;
 }
 

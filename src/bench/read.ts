@@ -1,5 +1,4 @@
 /** What can be seen of the bench: plain JSON for tags, live region, notebook and the server's answers. */
-import { indicators, substances } from '../chemistry/index.ts';
 import type { Solution } from '../chemistry/types.ts';
 import { sampleIn } from './create.ts';
 import { buretteReading, glassware, levelOf, pathOf, type Glass } from './glassware.ts';
@@ -179,9 +178,6 @@ export function concentrationInWords(value_molL: number): string {
   return `${Number(text) === digits ? text : String(digits)} mol/L`;
 }
 
-const substanceName = (id: string): string => substances.find((s) => s.id === id)?.name ?? id;
-const indicatorName = (id: string): string => indicators.find((s) => s.id === id)?.name ?? id;
-
 /** What was put into a glass at the start, in words. */
 function contentsInWords(state: BenchState, id: string, own: Contents | undefined): string | null {
   const dealt = sampleIn(state.spec, state.seed, id);
@@ -189,7 +185,7 @@ function contentsInWords(state: BenchState, id: string, own: Contents | undefine
   if (!contents || contents.volume_mL <= 0) return null;
   const parts = (contents.parts ?? []).map(
     (p) =>
-      `${substanceName(p.substance)} ${concentrationInWords(drawn(p.concentration_molL, state.seed, `${id}/${p.substance}`))}`,
+      `${p.substance} ${concentrationInWords(drawn(p.concentration_molL, state.seed, `${id}/${p.substance}`))}`,
   );
   const waters = {
     boiled: 'boiled water',
@@ -198,7 +194,7 @@ function contentsInWords(state: BenchState, id: string, own: Contents | undefine
   } as const;
   const base = parts.length > 0 ? parts.join(' + ') : waters[contents.water ?? 'boiled'];
   const dyes = (contents.indicators ?? []).map(
-    (d) => `${d.volume_mL.toFixed(2)} mL ${indicatorName(d.indicator)} ${d.massPercent ?? 0.1} %`,
+    (d) => `${d.volume_mL.toFixed(2)} mL ${d.indicator} ${d.massPercent ?? 0.1} %`,
   );
   return [dealt ? `${dealt.name}: ${base}` : base, ...dyes].join(', ');
 }

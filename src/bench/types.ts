@@ -167,8 +167,6 @@ export type AimSpec = AimBase &
         readonly vessels: readonly [string, string];
         readonly within: number;
       }
-    /** CIEDE2000 between two vessels at most `within`. */
-    | { readonly kind: 'same-colour'; readonly vessels: readonly [string, string]; readonly within?: number }
     | { readonly kind: 'calibrated' }
     /** A burette reading entered by the learner within this of the true one. */
     | { readonly kind: 'reading'; readonly vessel: string; readonly within_mL: number }

@@ -268,8 +268,8 @@ export const LOCAL_RULES = "Follow your local rules and your school's licensed p
 const corrosive = (at: Situation, liquid: Solution): 'acid' | 'base' | null => {
   if (liquid.volume_nL === 0) return null;
   const pH = solve(liquid, at.spec.model).pH;
-  if (pH < 1 && concentrationOf(liquid, at.spec.model, 'H3O+') >= CORROSIVE_ACID_MOLL) return 'acid';
-  if (pH > 13 && concentrationOf(liquid, at.spec.model, 'OH-') >= CORROSIVE_BASE_MOLL) return 'base';
+  if (pH < 1 && concentrationOf(liquid, at.spec.model, 1) >= CORROSIVE_ACID_MOLL) return 'acid';
+  if (pH > 13 && concentrationOf(liquid, at.spec.model, -1) >= CORROSIVE_BASE_MOLL) return 'base';
   return null;
 };
 

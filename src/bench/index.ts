@@ -17,6 +17,18 @@ export {
 } from './apply.ts';
 export { listMoves, moves, offeredMoves } from './moves/registry.ts';
 export type { FieldKind, MoveDefinition } from './moves/kinds.ts';
-export { read } from './read.ts';
+export { read, readOne } from './read.ts';
 export { judge, judgeRun } from './aims.ts';
 export { amountsHidden, forBrowser, isGraded, isHidden, traceHidden } from './hiding.ts';
+export { notebook, notebookCsv, tellMove, type NotebookReading, type NotebookRow } from './notebook.ts';
+export { trace, traceSentence, type TracePoint, type TraceSeries } from './views/trace.ts';
+export {
+  ledger,
+  pairBar,
+  speciesBars,
+  type Ledger,
+  type LedgerRow,
+  type PairBar,
+  type SpeciesBar,
+} from './views/amounts.ts';
+export { describe } from './describe.ts';

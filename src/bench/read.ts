@@ -111,6 +111,13 @@ function readVessel(look: Look): VesselReading {
   };
 }
 
+/** One vessel as `read` shows it, without reading the others; null where there is no such vessel. */
+export function readOne(state: BenchState, id: string, seen: Seen = {}): VesselReading | null {
+  const spec = state.spec.vessels.find((v) => v.id === id);
+  const vessel = state.scene.vessels[id];
+  return spec && vessel ? readVessel({ state, seen, spec, glass: glassware[spec.glass], vessel }) : null;
+}
+
 function readBottle(state: BenchState, seen: Seen, item: ShelfItem): BottleReading {
   const liquid = state.scene.bottles[item.id];
   const volume = liquid?.volume_nL ?? 0;
@@ -140,10 +147,7 @@ export function read(state: BenchState, seen: Seen = {}): Readings {
   const wasteOpen = !spec.vessels.some((v) => isHidden(spec, seen, 'pH', v.id));
   return {
     model: spec.model,
-    vessels: spec.vessels.flatMap((v) => {
-      const vessel = scene.vessels[v.id];
-      return vessel ? [readVessel({ state, seen, spec: v, glass: glassware[v.glass], vessel })] : [];
-    }),
+    vessels: spec.vessels.flatMap((v) => readOne(state, v.id, seen) ?? []),
     bottles: spec.shelf.map((item) => readBottle(state, seen, item)),
     waste: {
       volume_mL: mLShown(waste.volume_nL),

@@ -23,7 +23,7 @@ function rig() {
       call();
     }
   };
-  return { announcer: createAnnouncer(message => spoken.push(message), timers), spoken, pass };
+  return { announcer: createAnnouncer((message) => spoken.push(message), timers), spoken, pass };
 }
 
 describe('the live region', () => {

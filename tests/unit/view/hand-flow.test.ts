@@ -15,14 +15,14 @@ function rig(room_uL = Number.POSITIVE_INFINITY) {
   let frames: (() => void)[] = [];
   const clock: Clock = {
     now: () => now,
-    frame: call => frames.push(call),
+    frame: (call) => frames.push(call),
     stop: () => {
       frames = [];
     },
   };
   const run: Pourable = {
     startPour: (from, into) => log.push(`start ${from} ${into}`),
-    growPour: volume_uL => {
+    growPour: (volume_uL) => {
       log.push(`grow ${Math.min(room_uL, volume_uL)}`);
       return volume_uL < room_uL;
     },
@@ -34,7 +34,7 @@ function rig(room_uL = Number.POSITIVE_INFINITY) {
     now += ms;
     const due = frames;
     frames = [];
-    due.forEach(call => call());
+    due.forEach((call) => call());
   };
   return { store, log, pass, waiting: () => frames.length };
 }

@@ -1,14 +1,25 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { inHand, REST, step, target, type Hand, type HandEffect, type HandEvent } from '../../../src/islands/bench/hand/machine';
+import {
+  inHand,
+  REST,
+  step,
+  target,
+  type Hand,
+  type HandEffect,
+  type HandEvent,
+} from '../../../src/islands/bench/hand/machine';
 
-function play(events: readonly HandEvent[], from: Hand = REST): { hand: Hand; effects: HandEffect['kind'][] } {
+function play(
+  events: readonly HandEvent[],
+  from: Hand = REST,
+): { hand: Hand; effects: HandEffect['kind'][] } {
   let hand = from;
   const effects: HandEffect['kind'][] = [];
   for (const event of events) {
     const next = step(hand, event);
     hand = next.hand;
-    effects.push(...next.effects.map(effect => effect.kind));
+    effects.push(...next.effects.map((effect) => effect.kind));
   }
   return { hand, effects };
 }
@@ -26,7 +37,12 @@ describe('the hand', () => {
   });
 
   it('puts a picked bottle back when it is picked again', () => {
-    expect(play([{ kind: 'pick', from: 'acid' }, { kind: 'pick', from: 'acid' }]).hand).toEqual(REST);
+    expect(
+      play([
+        { kind: 'pick', from: 'acid' },
+        { kind: 'pick', from: 'acid' },
+      ]).hand,
+    ).toEqual(REST);
   });
 
   it('leaves a dragged bottle tipped over the vessel where it was let go', () => {
@@ -82,7 +98,11 @@ describe('the hand', () => {
     const event: fc.Arbitrary<HandEvent> = fc.oneof(
       fc.record({ kind: fc.constant('pick' as const), from: id }),
       fc.record({ kind: fc.constant('place' as const), into: id }),
-      fc.record({ kind: fc.constant('lift' as const), from: id, by: fc.constantFrom('pointer' as const, 'keys' as const) }),
+      fc.record({
+        kind: fc.constant('lift' as const),
+        from: id,
+        by: fc.constantFrom('pointer' as const, 'keys' as const),
+      }),
       fc.record({ kind: fc.constant('move' as const), over: fc.option(id, { nil: null }) }),
       fc.constant<HandEvent>({ kind: 'drop' }),
       fc.constant<HandEvent>({ kind: 'hold' }),
@@ -90,7 +110,7 @@ describe('the hand', () => {
       fc.constantFrom<HandEvent>({ kind: 'letGo' }, { kind: 'cancel' }, { kind: 'interrupt' }),
     );
     fc.assert(
-      fc.property(fc.array(event, { maxLength: 60 }), events => {
+      fc.property(fc.array(event, { maxLength: 60 }), (events) => {
         const { hand, effects } = play([...events, { kind: 'interrupt' }]);
         expect(hand).toEqual(REST);
         effects.forEach((effect, i) => expect(effect === 'startPour').toBe(i % 2 === 0));

@@ -3,10 +3,12 @@ import { formatVolume, nextDown, nextUp, nudge, parseVolume } from '../../../src
 
 describe('the exact volume', () => {
   it('steps by drops, then halves, then millilitres, then fives', () => {
-    expect([50, 450, 500, 1000, 1050, 5000, 9000, 10_000].map(v => nextUp(v, 100_000))).toEqual([
+    expect([50, 450, 500, 1000, 1050, 5000, 9000, 10_000].map((v) => nextUp(v, 100_000))).toEqual([
       100, 500, 1000, 1500, 1500, 6000, 10_000, 15_000,
     ]);
-    expect([15_000, 10_000, 6000, 5000, 1000, 500, 100, 50].map(nextDown)).toEqual([10_000, 9000, 5000, 4500, 500, 450, 50, 50]);
+    expect([15_000, 10_000, 6000, 5000, 1000, 500, 100, 50].map(nextDown)).toEqual([
+      10_000, 9000, 5000, 4500, 500, 450, 50, 50,
+    ]);
   });
 
   it('goes back where it came from', () => {

@@ -147,6 +147,26 @@ function holds(state: BenchState, aim: AimSpec, met: ReadonlySet<string>): boole
   }
 }
 
+/** On which side of an aim's bounds a state lies: -1 below, 1 above, 0 within or where the aim has no bounds. */
+export function sideOfAim(state: BenchState, aim: AimSpec): -1 | 0 | 1 {
+  const side = (value: number | null, min: number | undefined, max: number | undefined) =>
+    value === null ? 0 : min !== undefined && value < min ? -1 : max !== undefined && value > max ? 1 : 0;
+  switch (aim.kind) {
+    case 'pH':
+      return side(pHOf(state, aim.vessel), aim.min, aim.max);
+    case 'ratio':
+      return side(ratioIn(state, aim.vessel, aim.family), aim.min, aim.max);
+    case 'volume':
+      return side(volumeIn(state, aim.vessel), aim.min_mL, aim.max_mL);
+    case 'equal': {
+      const [a, b] = aim.vessels.map((id) => quantity[aim.quantity](state, id));
+      return a == null || b == null ? 0 : side(a - b, -aim.within, aim.within);
+    }
+    default:
+      return 0;
+  }
+}
+
 function withinLimits(state: BenchState, aim: AimSpec): boolean {
   return (aim.limits ?? []).every((limit) => {
     const used = state.scene.used[limit.of];

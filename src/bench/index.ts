@@ -32,3 +32,6 @@ export {
   type SpeciesBar,
 } from './views/amounts.ts';
 export { describe } from './describe.ts';
+export { fairness, type Difference, type FairnessNote } from './fairness.ts';
+export { changedSpec, whatIf, type Change, type WhatIf } from './what-if.ts';
+export { rehearse, type AimRehearsal, type Rehearsal } from './rehearsal/rehearse.ts';

@@ -1,23 +1,36 @@
-import type { FrontConfig } from './config';
+// Under which names the site may be asked for, and from which pages it may be written to.
+import { hostname, networkInterfaces } from 'node:os';
+import type { FrontSettings } from './settings.ts';
+
+/** The demo's own names: no foreign name can be among them, so no foreign page can be rebound to it. */
+function ownNames(): Set<string> {
+  const names = new Set([
+    'localhost',
+    '127.0.0.1',
+    '[::1]',
+    hostname().toLowerCase(),
+    `${hostname().toLowerCase()}.local`,
+  ]);
+  for (const { address, family } of Object.values(networkInterfaces()).flatMap((list) => list ?? []))
+    names.add(family === 'IPv6' ? `[${address}]` : address);
+  return names;
+}
 
 /**
- * Which Host headers are answered and which origins may change something. In production that is PUBLIC_URL's alone. The
- * demo is also reached from other devices of the network, by the machine's address: any IP address and localhost go.
+ * The origin that a request with this Host header belongs to, or undefined where the host is not ours.
+ * A production site has one: PUBLIC_URL's. The demo also answers under this machine's names and addresses, so that
+ * another device on the network reaches it.
  */
-export function hostPolicy(config: FrontConfig) {
-  const own = config.publicUrl.host;
-  return {
-    allowed(host: string | undefined): boolean {
-      if (!host) return false;
-      if (host === own) return true;
-      if (config.NODE_ENV === 'production') return false;
-      return /^(localhost|127(\.\d{1,3}){3}|\d{1,3}(\.\d{1,3}){3}|\[[0-9a-f:]+\]|[a-z0-9-]+\.local)(:\d{1,5})?$/i.test(
-        host,
-      );
-    },
-    /** The one origin that a page served under this Host has. */
-    originOf(host: string): string {
-      return host === own ? config.publicUrl.origin : `http://${host}`;
-    },
-  };
+export function originOf(host: string | undefined, settings: FrontSettings): string | undefined {
+  if (!host || !/^[A-Za-z0-9.\-:[\]]+$/.test(host)) return undefined;
+  const { publicUrl, demo, production } = settings;
+  if (host.toLowerCase() === publicUrl.host) return publicUrl.origin;
+  if (!demo || production) return undefined;
+  try {
+    const url = new URL(`http://${host}`);
+    const port = url.port || '80';
+    return port === (publicUrl.port || '80') && ownNames().has(url.hostname) ? url.origin : undefined;
+  } catch {
+    return undefined;
+  }
 }

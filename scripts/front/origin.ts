@@ -1,22 +1,30 @@
+// Cross-site request forgery: a request that may change something comes from a page of our own, whatever its
+// content type. Browsers send Origin with each of them, so a request without one is not a browser's.
 import type { IncomingMessage } from 'node:http';
+import type { Refusal } from './refusal.ts';
 
-const SAFE = new Set(['GET', 'HEAD', 'OPTIONS']);
+const SAFE = new Set(['GET', 'HEAD']);
+const KNOWN = new Set([...SAFE, 'POST', 'PUT', 'PATCH', 'DELETE']);
 
-export const isSafe = (method: string | undefined): boolean => SAFE.has(method ?? 'GET');
+export const isSafe = (method: string | undefined): boolean => SAFE.has(method ?? '');
 
-/**
- * Every request that may change something has to come from our own pages, whatever its content type. Browsers send
- * Origin on every unsafe request and Sec-Fetch-Site beside it. Requests of servers (Stripe's webhooks) send neither; they
- * are let through on the paths that check a signature instead.
- * @returns why the request is refused, or null.
- */
-export function checkOrigin(request: IncomingMessage, pathname: string, ownOrigin: string): string | null {
-  if (isSafe(request.method)) return null;
+export function refuseMethod(method: string | undefined): Refusal | undefined {
+  if (KNOWN.has(method ?? '')) return undefined;
+  const headers = { Allow: [...KNOWN].join(', ') };
+  return { status: 405, code: 'method-not-allowed', title: 'This address takes no such request.', headers };
+}
+
+export function refuseForeign(request: IncomingMessage, ownOrigin: string): Refusal | undefined {
+  if (isSafe(request.method)) return undefined;
+  const { origin } = request.headers;
   const site = request.headers['sec-fetch-site'];
-  const origin = request.headers.origin;
-  if (pathname.startsWith('/api/webhooks/') && origin === undefined && site === undefined) return null;
-  if (site !== undefined && site !== 'same-origin') return 'it came from another site';
-  if (origin === undefined) return 'it does not say where it came from';
-  if (origin !== ownOrigin) return 'it came from another site';
-  return null;
+  const foreign: Refusal = {
+    status: 403,
+    code: 'foreign-origin',
+    title:
+      'This request did not come from a page of Dropwise, so it was not carried out. Open the page again and retry.',
+  };
+  if (origin !== ownOrigin) return foreign;
+  if (site !== undefined && site !== 'same-origin') return foreign;
+  return undefined;
 }

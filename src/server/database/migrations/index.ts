@@ -1,0 +1,5 @@
+import type { Migration } from '../migrate.ts';
+import { people } from './001-people.ts';
+
+/** In the order in which they run. A migration that has shipped is never changed. */
+export const migrations: readonly Migration[] = [people];

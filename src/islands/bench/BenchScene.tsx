@@ -1,5 +1,6 @@
 import { DndContext, KeyboardSensor, PointerSensor, useSensor, useSensors } from '@dnd-kit/core';
 import { memo, useMemo, useRef, useState } from 'react';
+import type { Model } from '../../bench/types';
 import { betweenVessels, overVessel } from './hand/targets';
 import type { Hands } from './hand/useHand';
 import { inHand, target } from './hand/machine';
@@ -13,6 +14,7 @@ interface Props {
   id: string;
   title: string;
   lead: string | null;
+  model: Model;
   vessels: readonly VesselLook[];
   shelf: readonly ShelfLook[];
   from: string;
@@ -26,6 +28,9 @@ interface Props {
   onInto: (id: string) => void;
   say: (message: string) => void;
 }
+
+/** Every number names the model that it was computed with. */
+const MODEL_WORDS: Record<Model, string> = { textbook: 'Textbook model, 25 °C', real: 'Model with activities' };
 
 const DRAG_PX = 6;
 const HOW =
@@ -91,7 +96,7 @@ export function BenchScene(props: Props) {
         id={props.id}
         title={props.title}
         lead={props.lead}
-        words={null}
+        words={<p className="wall-model">{MODEL_WORDS[props.model]}</p>}
         shapes={vessels.map(vessel => vessel.shape)}
         description={describeScene(vessels, shelf.map(item => [item.name, item.strength].filter(Boolean).join(' ')))}
         shelf={

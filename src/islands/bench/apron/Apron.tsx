@@ -17,6 +17,9 @@ export interface Deed {
 }
 
 export interface ApronProps {
+  children?: ReactNode;
+  /** The rarer moves of this bench, behind one button. */
+  more: { readonly open: boolean; readonly onToggle: () => void } | null;
   variant: 'lesson' | 'home' | 'front';
   sources: readonly Choice[];
   targets: readonly Choice[];
@@ -111,6 +114,12 @@ export function Apron(props: ApronProps) {
               {deed.label}
             </button>
           ))}
+          {props.more && (
+            <button type="button" className="button button-quiet" aria-expanded={props.more.open} onClick={props.more.onToggle}>
+              More moves
+              <MoreIcon />
+            </button>
+          )}
         </span>
       </div>
       <div className="ways">
@@ -144,6 +153,7 @@ export function Apron(props: ApronProps) {
           {again}
         </span>
       </div>
+      {props.children}
       <div className="apron-foot">
         <Message message={props.message} />
         {props.saving}

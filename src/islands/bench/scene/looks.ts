@@ -32,6 +32,8 @@ export interface VesselLook {
   readonly stirrer: boolean;
   readonly stirring: boolean;
   readonly stoppered: boolean;
+  /** What still fits, µL; null where the bench hides the volume. */
+  readonly room_uL: number | null;
   /** Height and words of the brim line, when the vessel is full. */
   readonly full: { readonly h: number; readonly text: string } | null;
 }

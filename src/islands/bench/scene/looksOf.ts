@@ -1,5 +1,5 @@
 import { glassware, levelOf } from '../../../bench/glassware';
-import type { BenchSpec, BottleReading, ShelfItem, VesselReading } from '../../../bench/types';
+import type { BenchSpec, BottleReading, Readings, ShelfItem, VesselReading } from '../../../bench/types';
 import { paint } from '../glass/light';
 import { shapeOf } from '../glass/shapeOf';
 import { formatPh, type PhReading, type ShelfLook, type VesselLook } from './looks';
@@ -17,17 +17,12 @@ function phOf(spec: BenchSpec, reading: VesselReading): PhReading {
   return reading.pH === undefined ? { kind: 'none' } : { kind: 'value', text: formatPh(reading.pH) };
 }
 
-/** What is drawn of one vessel; the same object for the same reading, so that still vessels are not drawn again. */
-const vessels = new WeakMap<VesselReading, VesselLook>();
-
-export function vesselLook(spec: BenchSpec, reading: VesselReading): VesselLook {
-  const known = vessels.get(reading);
-  if (known) return known;
+function vesselLook(spec: BenchSpec, reading: VesselReading): VesselLook {
   const glass = glassware[reading.glass];
   const shape = shapeOf(reading.glass);
   const plan = spec.vessels.find(vessel => vessel.id === reading.id);
   const brim = levelOf(glass, glass.capacity_mL) * 10 * shape.squash;
-  const look: VesselLook = {
+  return {
     id: reading.id,
     name: reading.label,
     shape,
@@ -46,24 +41,18 @@ export function vesselLook(spec: BenchSpec, reading: VesselReading): VesselLook 
     stirrer: plan?.stirrer !== undefined,
     stirring: reading.stirring,
     stoppered: reading.stoppered,
+    room_uL: reading.volume_mL === undefined ? null : Math.max(0, Math.round((glass.capacity_mL - reading.volume_mL) * 1000)),
     full: reading.full ? { h: brim, text: `Full at ${glass.capacity_mL.toFixed(1)} mL` } : null,
   };
-  vessels.set(reading, look);
-  return look;
 }
-
-const bottles = new WeakMap<BottleReading, ShelfLook>();
 
 function firstVolume(item: ShelfItem | undefined): number {
   return item?.contents?.volume_mL ?? item?.indicator?.volume_mL ?? 0;
 }
 
-/** What is drawn of one bottle. `hazards` are the marks that its concentration carries. */
-export function shelfLook(spec: BenchSpec, reading: BottleReading, hazards: readonly string[]): ShelfLook {
-  const known = bottles.get(reading);
-  if (known) return known;
+function shelfLook(spec: BenchSpec, reading: BottleReading, hazards: readonly string[]): ShelfLook {
   const first = firstVolume(spec.shelf.find(item => item.id === reading.id));
-  const look: ShelfLook = {
+  return {
     id: reading.id,
     name: reading.label,
     strength: reading.concentration ?? '',
@@ -73,6 +62,31 @@ export function shelfLook(spec: BenchSpec, reading: BottleReading, hazards: read
     level: reading.empty ? 0 : first > 0 ? Math.min(1, reading.left_mL / first) : 1,
     left_uL: Math.round(reading.left_mL * 1000),
   };
-  bottles.set(reading, look);
-  return look;
+}
+
+export interface Looks {
+  readonly vessels: readonly VesselLook[];
+  readonly shelf: readonly ShelfLook[];
+}
+
+/**
+ * Readings as they are to be drawn. What reads the same keeps its object, so that still vessels and bottles are not drawn
+ * again while another one fills.
+ * @param hazardsOf the marks that a bottle's concentration carries
+ */
+export function createLooks(spec: BenchSpec, hazardsOf: (item: ShelfItem) => readonly string[]): (readings: Readings) => Looks {
+  const known = new Map<string, { readonly text: string; readonly look: VesselLook | ShelfLook }>();
+  const hazards = new Map(spec.shelf.map(item => [item.id, hazardsOf(item)]));
+  const stable = <T extends VesselLook | ShelfLook>(key: string, reading: object, draw: () => T): T => {
+    const text = JSON.stringify(reading);
+    const before = known.get(key);
+    if (before?.text === text) return before.look as T;
+    const look = draw();
+    known.set(key, { text, look });
+    return look;
+  };
+  return readings => ({
+    vessels: readings.vessels.map(reading => stable(`vessel ${reading.id}`, reading, () => vesselLook(spec, reading))),
+    shelf: readings.bottles.map(reading => stable(`bottle ${reading.id}`, reading, () => shelfLook(spec, reading, hazards.get(reading.id) ?? []))),
+  });
 }

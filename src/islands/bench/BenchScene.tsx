@@ -1,6 +1,5 @@
 import { DndContext, KeyboardSensor, PointerSensor, useSensor, useSensors } from '@dnd-kit/core';
 import { memo, useMemo, useRef, useState } from 'react';
-import type { Model } from '../../bench/types';
 import { betweenVessels, overVessel } from './hand/targets';
 import type { Hands } from './hand/useHand';
 import { inHand, target } from './hand/machine';
@@ -14,7 +13,8 @@ interface Props {
   id: string;
   title: string;
   lead: string | null;
-  model: Model;
+  /** Every number names the model that it was computed with. */
+  model: string;
   vessels: readonly VesselLook[];
   shelf: readonly ShelfLook[];
   from: string;
@@ -28,9 +28,6 @@ interface Props {
   onInto: (id: string) => void;
   say: (message: string) => void;
 }
-
-/** Every number names the model that it was computed with. */
-const MODEL_WORDS: Record<Model, string> = { textbook: 'Textbook model, 25 °C', real: 'Model with activities' };
 
 const DRAG_PX = 6;
 const HOW =
@@ -96,8 +93,8 @@ export function BenchScene(props: Props) {
         id={props.id}
         title={props.title}
         lead={props.lead}
-        words={<p className="wall-model">{MODEL_WORDS[props.model]}</p>}
-        shapes={vessels.map(vessel => vessel.shape)}
+        words={<p className="wall-model">{props.model}</p>}
+        vessels={vessels}
         description={describeScene(vessels, shelf.map(item => [item.name, item.strength].filter(Boolean).join(' ')))}
         shelf={
           <Shelf

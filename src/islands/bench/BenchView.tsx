@@ -1,8 +1,8 @@
-import { lazy, Suspense, useCallback, useEffect, useMemo, useRef, useState, type ReactNode } from 'react';
+import { lazy, Suspense, useCallback, useEffect, useState, type ReactNode } from 'react';
 import { useStore } from 'zustand';
 import type { BenchSpec, Move } from '../../bench/types';
 import { Apron, type Choice } from './apron/Apron';
-import { delivery, quickDeeds } from './apron/deeds';
+import { delivery, moreKinds, quickDeeds } from './apron/deeds';
 import { BenchScene } from './BenchScene';
 import { DROP_UL, formatVolume } from './hand/volume';
 import { useHand } from './hand/useHand';
@@ -155,7 +155,7 @@ export function BenchView({ spec, store, variant, hazardsOf, sheet, savingWords 
   };
 
   const deeds = quickDeeds(spec, run.readings, into === BOTH ? '' : into);
-  const hasMore = useMemo(() => variant === 'lesson', [variant]);
+  const hasMore = variant === 'lesson' && moreKinds(spec).length > 0;
   const sources: Choice[] = [
     ...shelf.map(item => ({ id: item.id, name: [item.name, item.strength].filter(Boolean).join(' ') })),
     ...vessels.filter(vessel => vessel.level_mm !== null && variant === 'lesson').map(vessel => ({ id: vessel.id, name: vessel.name })),
@@ -170,8 +170,7 @@ export function BenchView({ spec, store, variant, hazardsOf, sheet, savingWords 
   const room_uL = into === BOTH ? Math.min(...vessels.map(vessel => vessel.room_uL ?? Number.POSITIVE_INFINITY)) : (target?.room_uL ?? Number.POSITIVE_INFINITY);
   const most_uL = Math.min(stock_uL, room_uL, 2_000_000);
 
-  const hint = useRef<string | null>(null);
-  hint.current =
+  const hint =
     hand.at === 'picked'
       ? 'Now choose a vessel.'
       : hand.at === 'poised'
@@ -186,7 +185,7 @@ export function BenchView({ spec, store, variant, hazardsOf, sheet, savingWords 
             id={spec.id}
             title={spec.title}
             lead={spec.intro ?? null}
-            model={spec.model}
+            model={`${spec.model === 'textbook' ? 'Textbook model' : 'Model with activities'}, ${spec.temperature_C} °C`}
             vessels={vessels}
             shelf={shelf}
             from={from}
@@ -222,8 +221,8 @@ export function BenchView({ spec, store, variant, hazardsOf, sheet, savingWords 
             message={
               run.refusal
                 ? { kind: 'refusal', text: run.refusal.sentence }
-                : hint.current
-                  ? { kind: 'hint', text: hint.current }
+                : hint
+                  ? { kind: 'hint', text: hint }
                   : noticeOf(run)
             }
             saving={<p className="saving">{savingWords(run)}</p>}

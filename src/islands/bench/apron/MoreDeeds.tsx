@@ -1,31 +1,8 @@
 import { useId, useState, type FormEvent } from 'react';
 import { glassware, marksOf } from '../../../bench/glassware';
-import { moves, offeredMoves } from '../../../bench/moves/registry';
-import type { BenchSpec, Move, MoveKind } from '../../../bench/types';
-
-/** Moves that the sentence, the quick deeds or the list itself already offer. */
-const ELSEWHERE: ReadonlySet<MoveKind> = new Set<MoveKind>([
-  'pour',
-  'drip',
-  'addToBoth',
-  'dispense',
-  'addIndicator',
-  'swirl',
-  'stir',
-  'dipProbe',
-  'liftProbe',
-  'rinseProbe',
-  'wear',
-  'wipe',
-  'undo',
-  'startAgain',
-]);
-
-type RestKind = Exclude<keyof typeof moves, 'pour' | 'drip' | 'addToBoth' | 'dispense' | 'addIndicator'>;
-
-export function moreKinds(spec: BenchSpec): RestKind[] {
-  return offeredMoves(spec).filter(kind => !ELSEWHERE.has(kind)) as RestKind[];
-}
+import { moves } from '../../../bench/moves/registry';
+import type { BenchSpec, Move } from '../../../bench/types';
+import { moreKinds, type RestKind } from './deeds';
 
 interface Props {
   spec: BenchSpec;

@@ -1,4 +1,5 @@
 import { glassware } from '../../../bench/glassware';
+import { offeredMoves, type moves } from '../../../bench/moves/registry';
 import type { BenchSpec, Move, MoveKind, Readings } from '../../../bench/types';
 
 /** A move that needs nothing but the vessel that the sentence names: one press. */
@@ -40,3 +41,29 @@ export function delivery(spec: BenchSpec, from: string, into: string, volume_uL:
   const burette = spec.vessels.find(vessel => vessel.id === from && vessel.glass === 'burette-50');
   return burette ? { kind: 'dispense', burette: from, into, volume_uL } : { kind: 'pour', from, into, volume_uL };
 }
+
+/** Moves that the sentence, the quick deeds or the list itself already offer. */
+const ELSEWHERE: ReadonlySet<MoveKind> = new Set<MoveKind>([
+  'pour',
+  'drip',
+  'addToBoth',
+  'dispense',
+  'addIndicator',
+  'swirl',
+  'stir',
+  'dipProbe',
+  'liftProbe',
+  'rinseProbe',
+  'wear',
+  'wipe',
+  'undo',
+  'startAgain',
+]);
+
+export type RestKind = Exclude<keyof typeof moves, 'pour' | 'drip' | 'addToBoth' | 'dispense' | 'addIndicator'>;
+
+/** Kinds of moves that stand behind 'More moves'. */
+export function moreKinds(spec: BenchSpec): RestKind[] {
+  return offeredMoves(spec).filter(kind => !ELSEWHERE.has(kind)) as RestKind[];
+}
+

@@ -40,6 +40,9 @@ export function StirBar({ turning }: { turning: boolean }) {
   return <rect className={turning ? 'stir-bar stir-bar-turning' : 'stir-bar'} x="-5" y="-3.2" width="10" height="3" rx="1.5" />;
 }
 
+/** Height of the stirrer under a vessel, mm. */
+export const STIRRER_MM = 9.7;
+
 /** The stirrer that a vessel stands on. */
 export const Stirrer = memo(function Stirrer({ on }: { on: boolean }) {
   return (

@@ -1,5 +1,6 @@
 import type { CSSProperties, ReactNode } from 'react';
-import { FLOOR_MM, type GlassShape } from '../glass/shape';
+import { FLOOR_MM } from '../glass/shape';
+import { STIRRER_MM } from '../glass/tools';
 import { narrowLayout, wideLayout } from './layout';
 import { describeVessel, formatMl, type VesselLook } from './looks';
 
@@ -9,15 +10,15 @@ interface SceneProps {
   lead: string | null;
   words: ReactNode;
   shelf: ReactNode;
-  shapes: readonly GlassShape[];
+  vessels: readonly VesselLook[];
   stations: readonly ReactNode[];
   description: string;
 }
 
 /** Wall, shelf, vessels and slab. The scene is described in words for those who do not see it. */
-export function Scene({ id, title, lead, words, shelf, shapes, stations, description }: SceneProps) {
-  const wide = wideLayout(shapes);
-  const narrow = narrowLayout(shapes);
+export function Scene({ id, title, lead, words, shelf, vessels, stations, description }: SceneProps) {
+  const wide = wideLayout(vessels);
+  const narrow = narrowLayout(vessels);
   const variables = {
     '--wide-columns': wide.columns,
     '--narrow-columns': narrow.columns,
@@ -26,7 +27,7 @@ export function Scene({ id, title, lead, words, shelf, shapes, stations, descrip
     '--tall': wide.tall_mm,
   } as CSSProperties;
   return (
-    <div className="scene" style={variables} data-vessels={shapes.length}>
+    <div className="scene" style={variables} data-vessels={vessels.length}>
       <div className="wall-tiles" aria-hidden="true" />
       <div className="wall-top">
         <div className="wall-words">
@@ -76,12 +77,12 @@ function Band({ row, wideRows, narrowRows }: { row: number; wideRows: number; na
 
 /** A dotted line between two equal glasses whose levels stand equally high. */
 export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook }) {
-  const same = left.level_mm !== null && left.volume_uL !== null && left.shape === right.shape && left.volume_uL === right.volume_uL;
+  const same = left.level_mm !== null && left.volume_uL !== null && left.shape === right.shape && left.volume_uL === right.volume_uL && left.stirrer === right.stirrer;
   if (!same) return null;
   return (
     <span
       className="level-line"
-      style={{ '--level': left.level_mm! + FLOOR_MM } as CSSProperties}
+      style={{ '--level': left.level_mm! + FLOOR_MM + (left.stirrer ? STIRRER_MM : 0) } as CSSProperties}
       aria-hidden="true"
     >
       <span>{formatMl(left.volume_uL!)} each</span>

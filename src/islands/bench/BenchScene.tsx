@@ -5,7 +5,7 @@ import type { Hands } from './hand/useHand';
 import { inHand, target } from './hand/machine';
 import { Carried } from './scene/Carried';
 import type { ShelfLook, VesselLook } from './scene/looks';
-import { describeScene, LevelLine, Scene } from './scene/Scene';
+import { LevelLine, Scene } from './scene/Scene';
 import { Shelf } from './scene/Shelf';
 import { Station } from './scene/Station';
 
@@ -15,6 +15,7 @@ interface Props {
   lead: string | null;
   /** Every number names the model that it was computed with. */
   model: string;
+  description: readonly string[];
   vessels: readonly VesselLook[];
   shelf: readonly ShelfLook[];
   from: string;
@@ -95,7 +96,7 @@ export function BenchScene(props: Props) {
         lead={props.lead}
         words={<p className="wall-model">{props.model}</p>}
         vessels={vessels}
-        description={describeScene(vessels, shelf.map(item => [item.name, item.strength].filter(Boolean).join(' ')))}
+        description={props.description}
         shelf={
           <Shelf
             items={shelf}

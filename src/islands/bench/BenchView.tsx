@@ -1,5 +1,6 @@
 import { lazy, Suspense, useCallback, useEffect, useState, type ReactNode } from 'react';
 import { useStore } from 'zustand';
+import { describe } from '../../bench/describe';
 import type { BenchSpec, Move } from '../../bench/types';
 import { Apron, type Choice } from './apron/Apron';
 import { delivery, moreKinds, quickDeeds } from './apron/deeds';
@@ -26,7 +27,7 @@ interface Props {
   /** The marks that a bottle's concentration carries. */
   hazardsOf: (item: BenchSpec['shelf'][number]) => readonly string[];
   /** What stands below the apron. */
-  sheet: (run: RunView, looks: Looks) => ReactNode;
+  sheet: (run: RunView, vessel: string) => ReactNode;
   savingWords: (run: RunView) => string;
 }
 
@@ -186,6 +187,7 @@ export function BenchView({ spec, store, variant, hazardsOf, sheet, savingWords 
             title={spec.title}
             lead={spec.intro ?? null}
             model={`${spec.model === 'textbook' ? 'Textbook model' : 'Model with activities'}, ${spec.temperature_C} °C`}
+            description={describe(run.readings)}
             vessels={vessels}
             shelf={shelf}
             from={from}
@@ -251,7 +253,7 @@ export function BenchView({ spec, store, variant, hazardsOf, sheet, savingWords 
               </Suspense>
             )}
           </Apron>
-          {sheet(run, looks)}
+          {sheet(run, into === BOTH ? (vessels[1]?.id ?? '') : into)}
         </div>
       </div>
       {liveRegion}

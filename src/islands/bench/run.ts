@@ -13,6 +13,8 @@ export interface RunView {
   readonly metAims: readonly string[];
   /** Met as far as this browser can tell. */
   readonly locallyMet: readonly string[];
+  /** The prediction that this bench waits for is locked in. */
+  readonly predicted?: boolean | undefined;
   readonly saving: Saving;
   readonly pouring?: { readonly from: string; readonly into: string; readonly volume_uL: number } | undefined;
   readonly refusal?: Pick<Refusal, 'code' | 'sentence'> | undefined;

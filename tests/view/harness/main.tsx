@@ -7,9 +7,11 @@ import '@fontsource/nunito/latin-800.css';
 import './page.css';
 import '../../../src/islands/bench/bench.css';
 import { BenchView } from '../../../src/islands/bench/BenchView';
+import { Sheet } from '../../../src/islands/bench/sheet/Sheet';
 import { spec } from './spec';
 import { memoryStore } from './store';
 
+const SEEN = { predicted: true };
 const variant = new URLSearchParams(location.search).has('home') ? 'home' : 'lesson';
 
 createRoot(document.getElementById('root')!).render(
@@ -20,7 +22,7 @@ createRoot(document.getElementById('root')!).render(
         store={memoryStore(spec)}
         variant={variant}
         hazardsOf={() => []}
-        sheet={() => null}
+        sheet={(run, vessel) => (variant === 'home' ? null : <Sheet spec={spec} run={run} seen={SEEN} vessel={vessel} asksServer={false} />)}
         savingWords={() => 'Kept on this device'}
       />
     </div>

@@ -2,7 +2,7 @@ import type { CSSProperties, ReactNode } from 'react';
 import { FLOOR_MM } from '../glass/shape';
 import { STIRRER_MM } from '../glass/tools';
 import { narrowLayout, wideLayout } from './layout';
-import { describeVessel, formatMl, type VesselLook } from './looks';
+import { formatMl, type VesselLook } from './looks';
 
 interface SceneProps {
   id: string;
@@ -12,7 +12,8 @@ interface SceneProps {
   shelf: ReactNode;
   vessels: readonly VesselLook[];
   stations: readonly ReactNode[];
-  description: string;
+  /** The text alternative of the scene, in sentences. */
+  description: readonly string[];
 }
 
 /** Wall, shelf, vessels and slab. The scene is described in words for those who do not see it. */
@@ -38,7 +39,11 @@ export function Scene({ id, title, lead, words, shelf, vessels, stations, descri
         </div>
         {shelf}
       </div>
-      <p className="visually-hidden">{description}</p>
+      <div className="visually-hidden">
+        {description.map(sentence => (
+          <p key={sentence}>{sentence}</p>
+        ))}
+      </div>
       <div className="stations">
         {Array.from({ length: Math.max(wide.rows, narrow.rows) }, (_, row) => (
           <Band key={row} row={row} wideRows={wide.rows} narrowRows={narrow.rows} />
@@ -88,10 +93,4 @@ export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook
       <span>{formatMl(left.volume_uL!)} each</span>
     </span>
   );
-}
-
-/** The whole scene in sentences. */
-export function describeScene(vessels: readonly VesselLook[], shelf: readonly string[]): string {
-  const glasses = vessels.map(describeVessel).join(' ');
-  return shelf.length === 0 ? glasses : `${glasses} On the shelf: ${shelf.join('; ')}.`;
 }

@@ -1,6 +1,7 @@
 import { memo, useState } from 'react';
 
 export interface NoteLook {
+  readonly key: string;
   readonly n: number;
   readonly vessel: string;
   readonly what: string;
@@ -17,21 +18,11 @@ export interface NoteLook {
 const SHOWN_FIRST = 12;
 
 /** Every move with what could be read after it. The newest line is last; long runs show their end first. */
-export const NotebookTable = memo(function NotebookTable({ notes }: { notes: readonly NoteLook[] }) {
+export const NotebookTable = memo(function NotebookTable({ notes, moved }: { notes: readonly NoteLook[]; moved: boolean }) {
   const [all, setAll] = useState(false);
-  if (notes.length === 0) {
-    return (
-      <section className="part">
-        <h3>Notebook</h3>
-        <p className="empty">
-          <strong>No moves yet.</strong> Pour something and it will be written here.
-        </p>
-      </section>
-    );
-  }
   const hiddenCount = all ? 0 : Math.max(0, notes.length - SHOWN_FIRST);
   const shown = notes.slice(hiddenCount);
-  const last = notes[notes.length - 1]!.n;
+  const last = notes.filter(note => !note.struck).at(-1)?.n;
   return (
     <section className="part">
       <h3>Notebook</h3>
@@ -61,8 +52,8 @@ export const NotebookTable = memo(function NotebookTable({ notes }: { notes: rea
         </thead>
         <tbody>
           {shown.map(note => (
-            <tr key={note.n} data-struck={note.struck || undefined} data-last={(note.n === last && !note.struck) || undefined}>
-              <td className="wide-only line-number">{note.n}</td>
+            <tr key={note.key} data-struck={note.struck || undefined} data-last={(moved && note.n === last && !note.struck) || undefined}>
+              <td className="wide-only line-number">{note.n === 0 ? '' : note.n}</td>
               <th scope="row">{note.vessel}</th>
               <td className="wide-only">
                 {note.struck ? <s>{note.what}</s> : note.what}
@@ -82,6 +73,11 @@ export const NotebookTable = memo(function NotebookTable({ notes }: { notes: rea
           ))}
         </tbody>
       </table>
+      {!moved && (
+        <p className="empty">
+          <strong>No moves yet.</strong> Pour something and it will be written here.
+        </p>
+      )}
     </section>
   );
 });

@@ -10,10 +10,6 @@ export interface PairLook {
   readonly base_mmol: number;
   /** Acid's share of the pair when the vessel was set up, 0 to 1. */
   readonly startShare: number;
-  readonly pKa: number;
-  /** Strong acid or base that may come before the pH leaves pKa ± 1, mmol. */
-  readonly roomForAcid_mmol: number;
-  readonly roomForBase_mmol: number;
   readonly sentence: string;
 }
 
@@ -45,6 +41,9 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
   const least = at(LEAST_ACID);
   const most = at(MOST_ACID);
   const start = at(pair.startShare);
+  // What strong base or acid turns over before one partner is ten times the other, that is, before the pH leaves pKa ± 1.
+  const roomForBase = pair.acid_mmol - total * LEAST_ACID;
+  const roomForAcid = pair.base_mmol - total * (1 - MOST_ACID);
   const acidText = `${pair.acid} ${three(pair.acid_mmol)}`;
   const baseText = `${pair.base} ${three(pair.base_mmol)}`;
   const acidRoom = now - 10 > acidText.length * 11;
@@ -60,10 +59,10 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
         </pattern>
       </defs>
       <text className="figure-words" x={clamp(least, 34, width - 34)} y={16} textAnchor="middle">
-        pH {(pair.pKa + 1).toFixed(2)}
+        10 : 1
       </text>
       <text className="figure-words" x={clamp(most, 34, width - 34)} y={16} textAnchor="middle">
-        pH {(pair.pKa - 1).toFixed(2)}
+        1 : 10
       </text>
       {Math.abs(now - least) > 66 && Math.abs(now - most) > 66 && (
         <text className="figure-name" x={now} y={16} textAnchor="middle">
@@ -92,8 +91,8 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
         <line className={start < now ? 'pair-start pair-start-white' : 'pair-start'} x1={start} x2={start} y1={34} y2={74} />
       )}
       <line className="pair-now" x1={now} x2={now} y1={24} y2={84} />
-      <Bracket from={least} to={now} text={`${three(pair.roomForBase_mmol)} base`} width={width} />
-      <Bracket from={now} to={most} text={`${three(pair.roomForAcid_mmol)} acid`} width={width} />
+      <Bracket from={least} to={now} text={`${three(roomForBase)} base`} width={width} />
+      <Bracket from={now} to={most} text={`${three(roomForAcid)} acid`} width={width} />
     </svg>
   );
 }

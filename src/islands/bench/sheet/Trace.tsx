@@ -11,6 +11,8 @@ export interface TraceSeries {
   readonly id: string;
   readonly name: string;
   readonly points: readonly TracePoint[];
+  /** The computed way between the points, mL and pH; empty where only the points are known. */
+  readonly curve: readonly (readonly [number, number])[];
 }
 
 export interface TraceProps {
@@ -52,8 +54,9 @@ function Figure({ width, series, aims, strip, added }: Omit<TraceProps, 'absent'
   const top = 26;
   const bottom = height - 52;
   const all = series.flatMap(one => one.points);
-  const low = Math.max(0, Math.floor(Math.min(...all.map(p => p.pH), ...aims) - 0.5));
-  const high = Math.min(14, Math.ceil(Math.max(...all.map(p => p.pH), ...aims) + 0.5));
+  const pHs = [...all.map(p => p.pH), ...series.flatMap(one => one.curve.map(([, pH]) => pH)), ...aims];
+  const low = Math.max(0, Math.floor(Math.min(...pHs) - 0.5));
+  const high = Math.min(14, Math.ceil(Math.max(...pHs) + 0.5));
   const span = Math.max(2, high - low);
   const most = niceCeiling(Math.max(1, ...all.map(p => p.x_mL)));
   const step = most / 5 >= 1 ? Math.ceil(most / 6) : most / 5;
@@ -101,7 +104,7 @@ function Figure({ width, series, aims, strip, added }: Omit<TraceProps, 'absent'
           key={one.id}
           className="figure-line"
           strokeDasharray={DASHES[i % DASHES.length]}
-          points={one.points.map(p => `${x(p.x_mL)},${y(p.pH)}`).join(' ')}
+          points={(one.curve.length > 0 ? one.curve : one.points.map(p => [p.x_mL, p.pH] as const)).map(([v, pH]) => `${x(v)},${y(pH)}`).join(' ')}
         />
       ))}
       {series.map((one, i) => (

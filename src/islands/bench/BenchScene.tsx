@@ -1,5 +1,5 @@
 import { DndContext, KeyboardSensor, PointerSensor, useSensor, useSensors } from '@dnd-kit/core';
-import { memo, useMemo, useRef, useState } from 'react';
+import { memo, useMemo, useRef, useState, type ReactNode } from 'react';
 import { betweenVessels, overVessel } from './hand/targets';
 import type { Hands } from './hand/useHand';
 import { inHand, target } from './hand/machine';
@@ -28,6 +28,8 @@ interface Props {
   onFrom: (id: string) => void;
   onInto: (id: string) => void;
   say: (message: string) => void;
+  /** Words of the page on the wall, instead of the bench's own title and shelf. */
+  words: ReactNode;
 }
 
 const DRAG_PX = 6;
@@ -40,7 +42,7 @@ export function BenchScene(props: Props) {
   const { hand, dispatch } = hands;
   const [way, setWay] = useState<'pointer' | 'keys'>('pointer');
   const where = useRef({ ids: [] as string[], wished: into });
-  where.current = { ids: vessels.map(vessel => vessel.id), wished: into };
+  where.current = { ids: vessels.map((vessel) => vessel.id), wished: into };
 
   const getter = useMemo(
     () => betweenVessels(() => ({ ...where.current, over: target(hands.current()) })),
@@ -58,8 +60,9 @@ export function BenchScene(props: Props) {
 
   const carried = inHand(hand);
   const over = target(hand);
-  const tipped = shelf.find(item => item.id === carried);
-  const nameOf = (id: string) => vessels.find(vessel => vessel.id === id)?.name ?? shelf.find(item => item.id === id)?.name ?? '';
+  const tipped = shelf.find((item) => item.id === carried);
+  const nameOf = (id: string) =>
+    vessels.find((vessel) => vessel.id === id)?.name ?? shelf.find((item) => item.id === id)?.name ?? '';
 
   return (
     <DndContext
@@ -67,7 +70,7 @@ export function BenchScene(props: Props) {
       sensors={sensors}
       collisionDetection={overVessel}
       accessibility={{ announcements: SILENT, screenReaderInstructions: { draggable: HOW } }}
-      onDragStart={event => {
+      onDragStart={(event) => {
         const by = event.activatorEvent instanceof KeyboardEvent ? 'keys' : 'pointer';
         setWay(by);
         const id = String(event.active.id);
@@ -75,7 +78,7 @@ export function BenchScene(props: Props) {
         dispatch({ kind: 'lift', from: id, by });
         props.say(`Picked up ${nameOf(id)}`);
       }}
-      onDragOver={event => {
+      onDragOver={(event) => {
         const id = event.over === null ? null : String(event.over.id);
         dispatch({ kind: 'move', over: id });
         if (id !== null) {
@@ -94,7 +97,8 @@ export function BenchScene(props: Props) {
         id={props.id}
         title={props.title}
         lead={props.lead}
-        words={<p className="wall-model">{props.model}</p>}
+        model={props.model}
+        hero={props.words}
         vessels={vessels}
         description={props.description}
         shelf={
@@ -103,7 +107,7 @@ export function BenchScene(props: Props) {
             chosen={from}
             picked={hand.at === 'picked' ? hand.from : null}
             away={carried}
-            onPick={id => {
+            onPick={(id) => {
               props.onFrom(id);
               dispatch({ kind: 'pick', from: id });
             }}
@@ -114,14 +118,18 @@ export function BenchScene(props: Props) {
             key={vessel.id}
             benchId={props.id}
             vessel={vessel}
-            beside={i > 0 && vessels.length === 2 ? vessels[i - 1]! : null}
-            tagSide={vessels.length > 2 ? 'under' : vessels.length === 2 && i === 0 ? 'left' : 'right'}
+            beside={i > 0 && vessels.length === 2 && props.words == null ? vessels[i - 1]! : null}
+            tagSide={tagSide(vessels.length, i, props.words != null)}
             chosen={vessel.id === into}
             takes={carried !== null && over === null && vessel.full === null}
             tipped={over === vessel.id ? tipped : undefined}
             pouring={hand.at === 'pouring'}
             drops={dripping?.into === vessel.id ? dripping.drops : 0}
-            dropPaint={dripping?.into === vessel.id ? shelf.find(item => item.id === dripping.from)?.paint : undefined}
+            dropPaint={
+              dripping?.into === vessel.id
+                ? shelf.find((item) => item.id === dripping.from)?.paint
+                : undefined
+            }
             settling={props.settling === vessel.id}
             hands={hands}
             onInto={props.onInto}
@@ -131,6 +139,12 @@ export function BenchScene(props: Props) {
       <Carried item={way === 'pointer' && hand.at === 'carried' && over === null ? (tipped ?? null) : null} />
     </DndContext>
   );
+}
+
+/** Tags stand outside the two glasses of a pair; beside words on the wall they all stand on the right. */
+function tagSide(count: number, i: number, besideWords: boolean): 'left' | 'right' | 'under' {
+  if (count > 2) return 'under';
+  return count === 2 && i === 0 && !besideWords ? 'left' : 'right';
 }
 
 /** The bench speaks for itself, politely: dnd-kit's own announcements stay silent. */
@@ -166,14 +180,16 @@ const StationAt = memo(function StationAt(props: AtProps) {
       tagSide={props.tagSide}
       chosen={props.chosen}
       takes={props.takes}
-      over={tipped ? { look: tipped, paint: tipped.paint, level: tipped.level, pouring: props.pouring } : null}
+      over={
+        tipped ? { look: tipped, paint: tipped.paint, level: tipped.level, pouring: props.pouring } : null
+      }
       dripping={dropPaint ? { paint: dropPaint, drops } : null}
       settling={props.settling}
-      onPlace={id => {
+      onPlace={(id) => {
         props.onInto(id);
         hands.dispatch({ kind: 'place', into: id });
       }}
-      onReach={id => {
+      onReach={(id) => {
         const hand = hands.current();
         if (hand.at === 'carried' && hand.by === 'keys') hands.dispatch({ kind: 'move', over: id });
       }}

@@ -22,9 +22,15 @@ createRoot(document.getElementById('root')!).render(
         store={memoryStore(spec)}
         variant={variant}
         hazardsOf={() => []}
-        sheet={(run, vessel) => (variant === 'home' ? null : <Sheet spec={spec} run={run} seen={SEEN} vessel={vessel} asksServer={false} />)}
+        sheet={(run, vessel) =>
+          variant === 'home' ? null : (
+            <Sheet spec={spec} run={run} seen={SEEN} vessel={vessel} asksServer={false} />
+          )
+        }
         savingWords={() => 'Kept on this device'}
-      />
+      >
+        {variant === 'home' ? <p className="hero">Pour it.<br/>Watch it.<br/>Work out why.</p> : undefined}
+      </BenchView>
     </div>
   </StrictMode>,
 );

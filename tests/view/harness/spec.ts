@@ -11,11 +11,23 @@ export const spec: BenchSpec = {
   temperature_C: 25,
   vessels: [
     {
-      id: 'water', label: 'Water', glass: 'beaker-100', probe: true, ...(query.has('unstirred') ? {} : { stirrer: 'on' as const }),
-      contents: { volume_mL: 50, water: 'boiled', indicators: [{ indicator: 'bromocresol-green', volume_mL: 0.5 }] },
+      id: 'water',
+      label: 'Water',
+      glass: 'beaker-100',
+      probe: true,
+      ...(query.has('unstirred') ? {} : { stirrer: 'on' as const }),
+      contents: {
+        volume_mL: 50,
+        water: 'boiled',
+        indicators: [{ indicator: 'bromocresol-green', volume_mL: 0.5 }],
+      },
     },
     {
-      id: 'buffer', label: 'Ethanoate buffer', glass: 'beaker-100', probe: true, ...(query.has('unstirred') ? {} : { stirrer: 'on' as const }),
+      id: 'buffer',
+      label: 'Ethanoate buffer',
+      glass: 'beaker-100',
+      probe: true,
+      ...(query.has('unstirred') ? {} : { stirrer: 'on' as const }),
       contents: {
         volume_mL: 50,
         parts: [
@@ -27,13 +39,35 @@ export const spec: BenchSpec = {
     },
   ],
   shelf: [
-    { id: 'acid', label: 'Hydrochloric acid', kind: 'reagent', contents: { volume_mL: 250, parts: [{ substance: 'HCl', concentration_molL: 0.1 }] } },
-    { id: 'base', label: 'Sodium hydroxide', kind: 'reagent', contents: { volume_mL: 250, parts: [{ substance: 'NaOH', concentration_molL: 0.1 }] } },
-    { id: 'bcg', label: 'Bromocresol green', kind: 'indicator', indicator: { id: 'bromocresol-green', volume_mL: 30 } },
+    {
+      id: 'acid',
+      label: 'Hydrochloric acid',
+      kind: 'reagent',
+      contents: { volume_mL: 250, parts: [{ substance: 'HCl', concentration_molL: 0.1 }] },
+    },
+    {
+      id: 'base',
+      label: 'Sodium hydroxide',
+      kind: 'reagent',
+      contents: { volume_mL: 250, parts: [{ substance: 'NaOH', concentration_molL: 0.1 }] },
+    },
+    {
+      id: 'bcg',
+      label: 'Bromocresol green',
+      kind: 'indicator',
+      indicator: { id: 'bromocresol-green', volume_mL: 30 },
+    },
     { id: 'wash', label: 'Boiled water', kind: 'wash', contents: { volume_mL: 500, water: 'boiled' } },
   ],
   aims: [
     { id: 'yellow', text: 'Turn the water yellow', kind: 'colour', vessel: 'water', words: ['yellow'] },
-    { id: 'ph', text: 'Bring the buffer to pH 4.50 ± 0.02', kind: 'pH', vessel: 'buffer', min: 4.48, max: 4.52 },
+    {
+      id: 'ph',
+      text: 'Bring the buffer to pH 4.50 ± 0.02',
+      kind: 'pH',
+      vessel: 'buffer',
+      min: 4.48,
+      max: 4.52,
+    },
   ],
 };

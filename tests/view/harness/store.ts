@@ -10,9 +10,21 @@ export function memoryStore(spec: BenchSpec, seed = 1): RunStore {
     let pour: { from: string; into: string } | null = null;
     const settle = (state: RunView['state']) => {
       const met = get().metAims;
-      set({ state, readings: read(state), moves: movesOf(state), metAims: [...met, ...judge(spec, state, met)], refusal: undefined, pouring: undefined });
+      set({
+        state,
+        readings: read(state),
+        moves: movesOf(state),
+        metAims: [...met, ...judge(spec, state, met)],
+        refusal: undefined,
+        pouring: undefined,
+      });
     };
-    const move = (volume_uL: number): Move => ({ kind: 'pour', from: pour!.from, into: pour!.into, volume_uL });
+    const move = (volume_uL: number): Move => ({
+      kind: 'pour',
+      from: pour!.from,
+      into: pour!.into,
+      volume_uL,
+    });
     const act = (next: Move) => {
       const outcome = apply(get().state, next);
       if (outcome.ok) settle(outcome.state);
@@ -30,10 +42,11 @@ export function memoryStore(spec: BenchSpec, seed = 1): RunStore {
         pour = { from, into };
         set({ pouring: { from, into, volume_uL: 0 }, refusal: undefined });
       },
-      growPour: volume_uL => {
+      growPour: (volume_uL) => {
         if (!pour || volume_uL < 1) return;
         let outcome = apply(get().state, move(volume_uL));
-        if (!outcome.ok && (outcome.refusal.possible_uL ?? 0) > 0) outcome = apply(get().state, move((volume_uL = outcome.refusal.possible_uL!)));
+        if (!outcome.ok && (outcome.refusal.possible_uL ?? 0) > 0)
+          outcome = apply(get().state, move((volume_uL = outcome.refusal.possible_uL!)));
         if (outcome.ok) set({ readings: read(outcome.state), pouring: { ...pour, volume_uL } });
         else set({ refusal: outcome.refusal });
       },

@@ -6,6 +6,8 @@ import { VolumeField } from './VolumeField';
 export interface Choice {
   readonly id: string;
   readonly name: string;
+  /** Concentration or strength. */
+  readonly more: string;
 }
 
 /** A move besides pouring that the chosen vessel offers: swirl, stir, dip the probe. */
@@ -78,12 +80,13 @@ export function Apron(props: ApronProps) {
       Start again
     </button>
   );
+  const source = props.sources.find((one) => one.id === props.from);
   if (props.variant === 'home') {
     return (
       <div className="apron apron-home" role="group" aria-label="Bench controls">
         <div className="sentence">
           <span className="sentence-word">
-            Try it: {props.sources.find(source => source.id === props.from)?.name.toLowerCase()}, into
+            Try it: {source && [source.name.toLowerCase(), source.more].filter(Boolean).join(' ')}, into
           </span>
           <Targets {...props} />
           {hold}
@@ -100,9 +103,15 @@ export function Apron(props: ApronProps) {
         <span className="sentence-word">Pour</span>
         <Select label="What to pour" options={props.sources} value={props.from} onChange={props.onFrom} />
         <span className="sentence-word">into</span>
-        <Select label="Into which vessel" options={props.targets} value={props.into} onChange={props.onInto} filled />
+        <Select
+          label="Into which vessel"
+          options={props.targets}
+          value={props.into}
+          onChange={props.onInto}
+          filled
+        />
         <span className="apron-end">
-          {props.deeds.map(deed => (
+          {props.deeds.map((deed) => (
             <button
               key={deed.key}
               type="button"
@@ -115,7 +124,12 @@ export function Apron(props: ApronProps) {
             </button>
           ))}
           {props.more && (
-            <button type="button" className="button button-quiet" aria-expanded={props.more.open} onClick={props.more.onToggle}>
+            <button
+              type="button"
+              className="button button-quiet"
+              aria-expanded={props.more.open}
+              onClick={props.more.onToggle}
+            >
               More moves
               <MoreIcon />
             </button>
@@ -162,18 +176,30 @@ export function Apron(props: ApronProps) {
   );
 }
 
-function Select(props: { label: string; options: readonly Choice[]; value: string; onChange: (id: string) => void; filled?: boolean }) {
-  const shown = props.options.find(option => option.id === props.value)?.name ?? '';
+const words = ({ name, more }: Choice): string => [name, more].filter(Boolean).join(' ');
+
+function Select(props: {
+  label: string;
+  options: readonly Choice[];
+  value: string;
+  onChange: (id: string) => void;
+  filled?: boolean;
+}) {
+  const shown = props.options.find((option) => option.id === props.value);
   return (
     <span className="tape tape-press tape-select" data-chosen={props.filled || undefined}>
       <span className="tape-select-words" aria-hidden="true">
-        {shown}
+        {shown && words(shown)}
         <MoreIcon />
       </span>
-      <select aria-label={props.label} value={props.value} onChange={event => props.onChange(event.target.value)}>
-        {props.options.map(option => (
+      <select
+        aria-label={props.label}
+        value={props.value}
+        onChange={(event) => props.onChange(event.target.value)}
+      >
+        {props.options.map((option) => (
           <option key={option.id} value={option.id}>
-            {option.name}
+            {words(option)}
           </option>
         ))}
       </select>
@@ -184,7 +210,7 @@ function Select(props: { label: string; options: readonly Choice[]; value: strin
 function Targets({ targets, into, onInto }: Pick<ApronProps, 'targets' | 'into' | 'onInto'>) {
   return (
     <span className="targets" role="group" aria-label="Into which vessel">
-      {targets.map(target => (
+      {targets.map((target) => (
         <button
           key={target.id}
           type="button"

@@ -72,7 +72,7 @@ export function HoldButton({ off, running_uL, onStart, onEnd, onInterrupt, onCan
       onKeyUp={onKeyUp}
       onClick={onClick}
       onBlur={() => end(onInterrupt)}
-      onContextMenu={event => event.preventDefault()}
+      onContextMenu={(event) => event.preventDefault()}
     >
       <DropIcon />
       <span className="hold-words" aria-hidden={running_uL !== null || undefined}>

@@ -30,11 +30,11 @@ export default function MoreDeeds({ spec, from, into, onDo, onClose }: Props) {
     onDo(move as unknown as Move);
   };
   return (
-    <form className="more" onSubmit={submit} aria-label="More moves" onKeyDown={event => event.key === 'Escape' && onClose()}>
+    <form className="more" onSubmit={submit} aria-label="More moves">
       <label className="more-field">
         <span>Move</span>
-        <select value={kind} onChange={event => setKind(event.target.value as RestKind)}>
-          {kinds.map(one => (
+        <select value={kind} onChange={(event) => setKind(event.target.value as RestKind)}>
+          {kinds.map((one) => (
             <option key={one} value={one}>
               {moves[one].name}
             </option>
@@ -57,7 +57,15 @@ export default function MoreDeeds({ spec, from, into, onDo, onClose }: Props) {
   );
 }
 
-const NUMBERS: ReadonlySet<string> = new Set(['mark', 'pH', 'temperature', 'seconds', 'reading', 'volume', 'drops']);
+const NUMBERS: ReadonlySet<string> = new Set([
+  'mark',
+  'pH',
+  'temperature',
+  'seconds',
+  'reading',
+  'volume',
+  'drops',
+]);
 
 const WORDS: Record<string, string> = {
   source: 'From',
@@ -77,26 +85,41 @@ const WORDS: Record<string, string> = {
 };
 
 function options(spec: BenchSpec, asks: string, into: string): { value: string; words: string }[] | null {
-  const vessels = spec.vessels.map(vessel => ({ value: vessel.id, words: vessel.label, glass: vessel.glass }));
-  const bottles = spec.shelf.map(item => ({ value: item.id, words: item.label, kind: item.kind, standard_pH: item.standard_pH }));
+  const vessels = spec.vessels.map((vessel) => ({
+    value: vessel.id,
+    words: vessel.label,
+    glass: vessel.glass,
+  }));
+  const bottles = spec.shelf.map((item) => ({
+    value: item.id,
+    words: item.label,
+    kind: item.kind,
+    standard_pH: item.standard_pH,
+  }));
   switch (asks) {
     case 'vessel':
       return vessels;
     case 'source':
       return [...bottles, ...vessels];
     case 'burette':
-      return vessels.filter(vessel => glassware[vessel.glass].family === 'burette');
+      return vessels.filter((vessel) => glassware[vessel.glass].family === 'burette');
     case 'pipette':
-      return vessels.filter(vessel => glassware[vessel.glass].family === 'pipette');
+      return vessels.filter((vessel) => glassware[vessel.glass].family === 'pipette');
     case 'indicator':
-      return bottles.filter(bottle => bottle.kind === 'indicator');
+      return bottles.filter((bottle) => bottle.kind === 'indicator');
     case 'wash':
-      return bottles.filter(bottle => bottle.kind === 'wash' || bottle.kind === 'reagent');
+      return bottles.filter((bottle) => bottle.kind === 'wash' || bottle.kind === 'reagent');
     case 'pH':
-      return bottles.flatMap(bottle => (bottle.standard_pH === undefined ? [] : [{ value: String(bottle.standard_pH), words: bottle.standard_pH.toFixed(2) }]));
+      return bottles.flatMap((bottle) =>
+        bottle.standard_pH === undefined
+          ? []
+          : [{ value: String(bottle.standard_pH), words: bottle.standard_pH.toFixed(2) }],
+      );
     case 'mark': {
-      const glass = spec.vessels.find(vessel => vessel.id === into)?.glass;
-      return glass ? marksOf(glassware[glass]).map(mark => ({ value: String(mark.mL), words: String(mark.mL) })) : [];
+      const glass = spec.vessels.find((vessel) => vessel.id === into)?.glass;
+      return glass
+        ? marksOf(glassware[glass]).map((mark) => ({ value: String(mark.mL), words: String(mark.mL) }))
+        : [];
     }
     case 'gas':
       return [
@@ -114,7 +137,19 @@ function options(spec: BenchSpec, asks: string, into: string): { value: string; 
   }
 }
 
-function Field({ spec, name, asks, from, into }: { spec: BenchSpec; name: string; asks: string; from: string; into: string }) {
+function Field({
+  spec,
+  name,
+  asks,
+  from,
+  into,
+}: {
+  spec: BenchSpec;
+  name: string;
+  asks: string;
+  from: string;
+  into: string;
+}) {
   const choices = options(spec, asks, into);
   const first = asks === 'vessel' ? into : asks === 'source' ? from : undefined;
   return (
@@ -122,14 +157,20 @@ function Field({ spec, name, asks, from, into }: { spec: BenchSpec; name: string
       <span>{name === 'into' ? 'Into' : (WORDS[asks] ?? name)}</span>
       {choices ? (
         <select name={name} defaultValue={first}>
-          {choices.map(choice => (
+          {choices.map((choice) => (
             <option key={choice.value} value={choice.value}>
               {choice.words}
             </option>
           ))}
         </select>
       ) : (
-        <input name={name} type="text" inputMode={asks === 'text' ? 'text' : 'decimal'} autoComplete="off" required />
+        <input
+          name={name}
+          type="text"
+          inputMode={asks === 'text' ? 'text' : 'decimal'}
+          autoComplete="off"
+          required
+        />
       )}
     </label>
   );

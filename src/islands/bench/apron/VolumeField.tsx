@@ -59,7 +59,12 @@ export function VolumeField({ volume_uL, most_uL, limit, onChange, onAdd }: Prop
     <div className="volume">
       <div className="volume-row">
         <div className="stepper" data-wrong={error !== null || undefined}>
-          <button type="button" className="stepper-button" aria-label="Less" onClick={() => set(nextDown(current))}>
+          <button
+            type="button"
+            className="stepper-button"
+            aria-label="Less"
+            onClick={() => set(nextDown(current))}
+          >
             −
           </button>
           <label className="stepper-field">
@@ -73,20 +78,30 @@ export function VolumeField({ volume_uL, most_uL, limit, onChange, onAdd }: Prop
               value={draft ?? formatVolume(volume_uL)}
               aria-invalid={error !== null}
               aria-describedby={`${id}-note`}
-              onChange={event => setDraft(event.target.value)}
+              onChange={(event) => setDraft(event.target.value)}
               onBlur={settle}
-              onFocus={event => event.target.select()}
+              onFocus={(event) => event.target.select()}
               onKeyDown={onKeyDown}
             />
             <span className="stepper-unit" aria-hidden="true">
               mL
             </span>
           </label>
-          <button type="button" className="stepper-button" aria-label="More" onClick={() => set(nextUp(current, ceiling))}>
+          <button
+            type="button"
+            className="stepper-button"
+            aria-label="More"
+            onClick={() => set(nextUp(current, ceiling))}
+          >
             +
           </button>
         </div>
-        <button type="button" className="button button-second add" aria-disabled={error !== null || most_uL < 1 || undefined} onClick={add}>
+        <button
+          type="button"
+          className="button button-second add"
+          aria-disabled={error !== null || most_uL < 1 || undefined}
+          onClick={add}
+        >
           Add
         </button>
       </div>

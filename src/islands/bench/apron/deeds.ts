@@ -9,7 +9,8 @@ export interface QuickDeed {
   readonly move: Move;
 }
 
-const offers = (spec: BenchSpec, kind: MoveKind): boolean => spec.moves === undefined || spec.moves.includes(kind);
+const offers = (spec: BenchSpec, kind: MoveKind): boolean =>
+  spec.moves === undefined || spec.moves.includes(kind);
 
 /** What one press can do with the chosen vessel now, most needed first. */
 export function quickDeeds(spec: BenchSpec, readings: Readings, into: string): QuickDeed[] {
@@ -19,27 +20,37 @@ export function quickDeeds(spec: BenchSpec, readings: Readings, into: string): Q
   };
   if (readings.spills.length > 0) add('wipe', 'Wipe up the spill', { kind: 'wipe' });
   for (const what of ['goggles', 'gloves'] as const) {
-    if (spec.safety?.[what] !== undefined && !readings[what]) add(what, `Put on ${what}`, { kind: 'wear', what, on: true });
+    if (spec.safety?.[what] !== undefined && !readings[what])
+      add(what, `Put on ${what}`, { kind: 'wear', what, on: true });
   }
-  const plan = spec.vessels.find(vessel => vessel.id === into);
-  const vessel = readings.vessels.find(reading => reading.id === into);
+  const plan = spec.vessels.find((vessel) => vessel.id === into);
+  const vessel = readings.vessels.find((reading) => reading.id === into);
   if (plan && vessel) {
     if (plan.stirrer !== undefined) {
-      add('stir', vessel.stirring ? 'Stop stirring' : 'Stir', { kind: 'stir', vessel: into, on: !vessel.stirring });
+      add('stir', vessel.stirring ? 'Stop stirring' : 'Stir', {
+        kind: 'stir',
+        vessel: into,
+        on: !vessel.stirring,
+      });
     }
-    if (glassware[plan.glass].canSwirl && !vessel.stirring && !vessel.empty) add('swirl', 'Swirl', { kind: 'swirl', vessel: into });
+    if (glassware[plan.glass].canSwirl && !vessel.stirring && !vessel.empty)
+      add('swirl', 'Swirl', { kind: 'swirl', vessel: into });
     const meter = readings.meter;
-    if (meter && meter.at !== into && !plan.probe) add('dip', 'Dip the probe', { kind: 'dipProbe', vessel: into });
+    if (meter && meter.at !== into && !plan.probe)
+      add('dip', 'Dip the probe', { kind: 'dipProbe', vessel: into });
     if (meter && meter.at !== null) add('lift', 'Lift the probe', { kind: 'liftProbe' });
-    if (meter && meter.at === null && !meter.rinsed) add('rinse-probe', 'Rinse the probe', { kind: 'rinseProbe' });
+    if (meter && meter.at === null && !meter.rinsed)
+      add('rinse-probe', 'Rinse the probe', { kind: 'rinseProbe' });
   }
   return deeds;
 }
 
 /** The delivering move of a source: a burette runs through its tap, everything else is poured. */
 export function delivery(spec: BenchSpec, from: string, into: string, volume_uL: number): Move {
-  const burette = spec.vessels.find(vessel => vessel.id === from && vessel.glass === 'burette-50');
-  return burette ? { kind: 'dispense', burette: from, into, volume_uL } : { kind: 'pour', from, into, volume_uL };
+  const burette = spec.vessels.find((vessel) => vessel.id === from && vessel.glass === 'burette-50');
+  return burette
+    ? { kind: 'dispense', burette: from, into, volume_uL }
+    : { kind: 'pour', from, into, volume_uL };
 }
 
 /** Moves that the sentence, the quick deeds or the list itself already offer. */
@@ -60,10 +71,12 @@ const ELSEWHERE: ReadonlySet<MoveKind> = new Set<MoveKind>([
   'startAgain',
 ]);
 
-export type RestKind = Exclude<keyof typeof moves, 'pour' | 'drip' | 'addToBoth' | 'dispense' | 'addIndicator'>;
+export type RestKind = Exclude<
+  keyof typeof moves,
+  'pour' | 'drip' | 'addToBoth' | 'dispense' | 'addIndicator'
+>;
 
 /** Kinds of moves that stand behind 'More moves'. */
 export function moreKinds(spec: BenchSpec): RestKind[] {
-  return offeredMoves(spec).filter(kind => !ELSEWHERE.has(kind)) as RestKind[];
+  return offeredMoves(spec).filter((kind) => !ELSEWHERE.has(kind)) as RestKind[];
 }
-

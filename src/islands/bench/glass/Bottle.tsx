@@ -36,7 +36,15 @@ export const Bottle = memo(function Bottle({ look, liquid, level, tip = 0, cappe
     <span className="bottle" style={tip === 0 ? undefined : { transform: `rotate(${-tip}deg)` }}>
       <svg viewBox={`0 0 ${BOTTLE.width} ${BOTTLE.height}`} width="100%" height="100%" aria-hidden="true">
         <path className="bottle-air" d={INSIDE} />
-        <Liquid inside={INSIDE} liquid={liquid} level={level} tip={tip} floor={150} full={108} middle={[62, 90]} />
+        <Liquid
+          inside={INSIDE}
+          liquid={liquid}
+          level={level}
+          tip={tip}
+          floor={150}
+          full={108}
+          middle={[62, 90]}
+        />
         <path className="bottle-ring" d={BODY} />
         <path className="bottle-inner-line" d={INSIDE} />
         <path className="bottle-line" d={BODY} />
@@ -54,14 +62,29 @@ export const Bottle = memo(function Bottle({ look, liquid, level, tip = 0, cappe
   );
 });
 
-function WashBottle({ look, liquid, level, tip }: Required<Pick<Props, 'look' | 'liquid' | 'level' | 'tip'>>) {
-  const body = 'M 44 50 L 44 55 C 44 68 14 66 14 86 L 14 141 Q 14 154 27 154 L 97 154 Q 110 154 110 141 L 110 86 C 110 66 80 68 80 55 L 80 50';
-  const inside = 'M 48 50 L 48 56 C 48 71 18 70 18 87 L 18 140 Q 18 150 28 150 L 96 150 Q 106 150 106 140 L 106 87 C 106 70 76 71 76 56 L 76 50 Z';
+function WashBottle({
+  look,
+  liquid,
+  level,
+  tip,
+}: Required<Pick<Props, 'look' | 'liquid' | 'level' | 'tip'>>) {
+  const body =
+    'M 44 50 L 44 55 C 44 68 14 66 14 86 L 14 141 Q 14 154 27 154 L 97 154 Q 110 154 110 141 L 110 86 C 110 66 80 68 80 55 L 80 50';
+  const inside =
+    'M 48 50 L 48 56 C 48 71 18 70 18 87 L 18 140 Q 18 150 28 150 L 96 150 Q 106 150 106 140 L 106 87 C 106 70 76 71 76 56 L 76 50 Z';
   return (
     <span className="bottle" style={tip === 0 ? undefined : { transform: `rotate(${-tip * 0.35}deg)` }}>
       <svg viewBox={`0 0 ${BOTTLE.width} ${BOTTLE.height}`} width="100%" height="100%" aria-hidden="true">
         <path className="bottle-air" d={inside} />
-        <Liquid inside={inside} liquid={liquid} level={level} tip={tip * 0.35} floor={150} full={86} middle={[62, 104]} />
+        <Liquid
+          inside={inside}
+          liquid={liquid}
+          level={level}
+          tip={tip * 0.35}
+          floor={150}
+          full={86}
+          middle={[62, 104]}
+        />
         <path className="bottle-dip" d="M 62 38 V 142" />
         <path className="bottle-ring" d={body} />
         <path className="bottle-inner-line" d={inside} />
@@ -116,7 +139,7 @@ function Label({ look }: { look: BottleLook }) {
       <span className="bottle-name">{look.name}</span>
       <span className="bottle-foot">
         <span className="bottle-strength">{look.strength}</span>
-        {look.hazards.slice(0, 2).map(hazard => (
+        {look.hazards.slice(0, 2).map((hazard) => (
           <HazardMark key={hazard} code={hazard} />
         ))}
       </span>

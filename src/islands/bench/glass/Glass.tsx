@@ -26,7 +26,10 @@ export function Glass(props: GlassProps) {
   const clip = useId();
   const frame = useMemo(() => measure(shape), [shape]);
   const surface = level_mm === null ? null : surfacePaths(shape.profile, level_mm, stirring ? 1 : 0);
-  const size: CSSProperties = { width: `calc(var(--s) * ${frame.width})`, height: `calc(var(--s) * ${frame.height})` };
+  const size: CSSProperties = {
+    width: `calc(var(--s) * ${frame.width})`,
+    height: `calc(var(--s) * ${frame.height})`,
+  };
   return (
     <span className="glass" style={size} aria-hidden="true">
       <svg viewBox={`${frame.x} ${frame.y} ${frame.width} ${frame.height}`} width="100%" height="100%">
@@ -75,10 +78,18 @@ export function measure(shape: GlassShape): Frame {
   const paths = outlinePaths(shape.profile, shape.lip, shape.rounding);
   const foot = shape.foot ? shape.foot.r : 0;
   const left = Math.min(paths.left, -foot, shape.jet ? -26 : 0) - 0.4;
-  const right = Math.max(paths.right, foot, ...shape.texts.filter(text => text.outside).map(text => text.x + 6)) + 0.4;
+  const right =
+    Math.max(paths.right, foot, ...shape.texts.filter((text) => text.outside).map((text) => text.x + 6)) +
+    0.4;
   const y = paths.top - 0.5;
   const bottom = FLOOR_MM + 0.3 + (shape.foot ? shape.foot.height : shape.jet ? JET_MM : 0);
-  return { x: left, y, width: right - left, height: bottom - y, inner: innerPath(shape.profile, shape.rounding) };
+  return {
+    x: left,
+    y,
+    width: right - left,
+    height: bottom - y,
+    inner: innerPath(shape.profile, shape.rounding),
+  };
 }
 
 const Walls = memo(function Walls({ shape }: { shape: GlassShape }) {
@@ -95,7 +106,10 @@ const Walls = memo(function Walls({ shape }: { shape: GlassShape }) {
       )}
       {shape.jet && (
         <>
-          <path className="glass-line glass-foot" d="M -1.8 1 V 4 H -1.2 V 12 L -0.6 17 H 0.6 L 1.2 12 V 4 H 1.8 V 1" />
+          <path
+            className="glass-line glass-foot"
+            d="M -1.8 1 V 4 H -1.2 V 12 L -0.6 17 H 0.6 L 1.2 12 V 4 H 1.8 V 1"
+          />
           <rect className="glass-line glass-foot" x="-3" y="4" width="6" height="4.4" rx="1" />
           <path className="stand-clamp" d="M 3.5 6.2 H 8" />
           <Stand top_mm={-paths.top} r_mm={brim.r} floor_mm={JET_MM} />
@@ -104,7 +118,14 @@ const Walls = memo(function Walls({ shape }: { shape: GlassShape }) {
       <path className="glass-inner-line" d={innerLine(shape)} />
       <path className="glass-line" d={paths.outer} />
       {shape.lip === 'ring' ? (
-        <rect className="glass-line glass-foot" x={-out - 1.2} y={-brim.h - 1.2} width={2 * out + 2.4} height={2.6} rx={1.2} />
+        <rect
+          className="glass-line glass-foot"
+          x={-out - 1.2}
+          y={-brim.h - 1.2}
+          width={2 * out + 2.4}
+          height={2.6}
+          rx={1.2}
+        />
       ) : (
         <path className="glass-mouth" d={paths.mouth} />
       )}
@@ -115,14 +136,25 @@ const Walls = memo(function Walls({ shape }: { shape: GlassShape }) {
 /** The thin line of the inner wall stops short of the brim, where the lip turns out. */
 function innerLine(shape: GlassShape): string {
   const top = shape.profile[shape.profile.length - 1]!.h * 0.94;
-  const cut = [...shape.profile.filter(point => point.h < top), { h: top, r: radiusAt(shape.profile, top) }];
+  const cut = [
+    ...shape.profile.filter((point) => point.h < top),
+    { h: top, r: radiusAt(shape.profile, top) },
+  ];
   return innerPath(cut, shape.rounding).replace(/ Z$/, '');
 }
 
-const Etching = memo(function Etching({ shape, level_mm, dark }: { shape: GlassShape; level_mm: number | null; dark: boolean }) {
+const Etching = memo(function Etching({
+  shape,
+  level_mm,
+  dark,
+}: {
+  shape: GlassShape;
+  level_mm: number | null;
+  dark: boolean;
+}) {
   return (
     <>
-      {shape.marks.map(mark => (
+      {shape.marks.map((mark) => (
         <path
           key={mark.h}
           className={dark && level_mm !== null && mark.h < level_mm - 0.2 ? 'etch etch-white' : 'etch'}
@@ -133,17 +165,25 @@ const Etching = memo(function Etching({ shape, level_mm, dark }: { shape: GlassS
   );
 });
 
-const Numbers = memo(function Numbers(props: { shape: GlassShape; level_mm: number | null; dark: boolean; frame: Frame }) {
+const Numbers = memo(function Numbers(props: {
+  shape: GlassShape;
+  level_mm: number | null;
+  dark: boolean;
+  frame: Frame;
+}) {
   const { shape, level_mm, dark, frame } = props;
   return (
     <>
-      {shape.texts.map(text => {
+      {shape.texts.map((text) => {
         const inside = !text.outside && dark && level_mm !== null && text.h < level_mm - 0.5;
         return (
           <span
             key={text.text}
             className={inside ? 'etch-text etch-text-white' : 'etch-text'}
-            style={{ left: pc((text.x - frame.x) / frame.width), top: pc((-text.h - frame.y) / frame.height) }}
+            style={{
+              left: pc((text.x - frame.x) / frame.width),
+              top: pc((-text.h - frame.y) / frame.height),
+            }}
           >
             {text.text}
           </span>

@@ -18,7 +18,7 @@ export const ETCH_TURNS_WHITE = 0.3;
 
 /** The colour of a liquid's surface line: the liquid's, times 0.64 in linear light. */
 export function surfaceOf([r, g, b]: Rgb): string {
-  const line = [r, g, b].map(c => fromLinear(toLinear(c) * 0.64));
+  const line = [r, g, b].map((c) => fromLinear(toLinear(c) * 0.64));
   return `rgb(${line.join(' ')})`;
 }
 

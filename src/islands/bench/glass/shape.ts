@@ -75,13 +75,23 @@ interface Knot {
 }
 
 /** One side of the glass from the middle of its floor to its top, `dx` outside the inner wall. */
-function side(profile: readonly ProfilePoint[], dx: number, floor: number, rounding: number, sign: 1 | -1): Knot[] {
+function side(
+  profile: readonly ProfilePoint[],
+  dx: number,
+  floor: number,
+  rounding: number,
+  sign: 1 | -1,
+): Knot[] {
   const first = profile[0]!;
   const turn = corner(profile, rounding) + (first.r > 0.5 ? dx : 0);
   const knots: Knot[] = [{ x: 0, y: floor }];
   if (turn > 0.2) {
     knots.push({ x: sign * (first.r + dx - turn), y: floor });
-    knots.push({ x: sign * (radiusAt(profile, turn) + dx), y: floor - turn, bend: [sign * (first.r + dx), floor] });
+    knots.push({
+      x: sign * (radiusAt(profile, turn) + dx),
+      y: floor - turn,
+      bend: [sign * (first.r + dx), floor],
+    });
   } else {
     knots.push({ x: sign * (first.r + dx), y: floor });
   }
@@ -98,7 +108,7 @@ const lineTo = (to: Knot, bend?: readonly [number, number]): string =>
 const upwards = (knots: readonly Knot[]): string =>
   knots
     .slice(1)
-    .map(knot => lineTo(knot, knot.bend))
+    .map((knot) => lineTo(knot, knot.bend))
     .join(' ');
 
 /** Commands from the top of a side down to the floor's middle. */
@@ -132,12 +142,12 @@ export interface OutlinePaths {
 /** The outer line with its lip. The spout is on the left. */
 export function outlinePaths(profile: readonly ProfilePoint[], lip: Lip, rounding: number): OutlinePaths {
   const brim = profile[profile.length - 1]!;
-  const widest = Math.max(...profile.map(point => point.r)) + WALL_MM;
+  const widest = Math.max(...profile.map((point) => point.r)) + WALL_MM;
   const height = brim.h;
   const out = brim.r + WALL_MM;
   const body = (reach: number): readonly ProfilePoint[] => {
     const cut = Math.max(height * 0.5, height - reach);
-    return [...profile.filter(point => point.h < cut), { h: cut, r: radiusAt(profile, cut) }];
+    return [...profile.filter((point) => point.h < cut), { h: cut, r: radiusAt(profile, cut) }];
   };
   if (lip === 'spout' || lip === 'flare') {
     const big = Math.min(1, brim.r / 20);
@@ -181,7 +191,11 @@ function meniscus(r: number): { rise: number; reach: number } {
  * The surface at height `h`: a closed region from the surface down (to be clipped by the inside), and the surface's
  * own line. `dip` lowers the middle while the liquid is stirred.
  */
-export function surfacePaths(profile: readonly ProfilePoint[], h: number, dip = 0): { region: string; line: string } {
+export function surfacePaths(
+  profile: readonly ProfilePoint[],
+  h: number,
+  dip = 0,
+): { region: string; line: string } {
   const r = radiusAt(profile, h);
   const { rise, reach } = meniscus(r);
   const up = Math.min(rise, h);
@@ -190,7 +204,7 @@ export function surfacePaths(profile: readonly ProfilePoint[], h: number, dip = 
     dip > 0
       ? `M ${n(-r)} ${n(y - up)} Q ${n(-r * 0.5)} ${n(y + dip)} 0 ${n(y + dip)} Q ${n(r * 0.5)} ${n(y + dip)} ${n(r)} ${n(y - up)}`
       : `M ${n(-r)} ${n(y - up)} Q ${n(-r + reach * 0.35)} ${n(y)} ${n(-r + reach)} ${n(y)} L ${n(r - reach)} ${n(y)} Q ${n(r - reach * 0.35)} ${n(y)} ${n(r)} ${n(y - up)}`;
-  const wide = Math.max(...profile.map(point => point.r)) + 1;
+  const wide = Math.max(...profile.map((point) => point.r)) + 1;
   const region = `${line} L ${n(wide)} ${n(y - up)} L ${n(wide)} 2 L ${n(-wide)} 2 L ${n(-wide)} ${n(y - up)} Z`;
   return { region, line };
 }

@@ -21,7 +21,11 @@ export function shapeOf(id: GlassId): GlassShape {
 
 function draw(glass: Glass): GlassShape {
   const whole = heightOf(glass) * 10;
-  const squeezed = glass.family === 'cylinder' || glass.family === 'burette' || glass.family === 'pipette' || glass.family === 'waste';
+  const squeezed =
+    glass.family === 'cylinder' ||
+    glass.family === 'burette' ||
+    glass.family === 'pipette' ||
+    glass.family === 'waste';
   const squash = squeezed ? Math.min(1, TALLEST_MM / whole) : 1;
   const profile: ProfilePoint[] = [];
   let h = 0;
@@ -57,11 +61,14 @@ function heightOfMark(glass: Glass, mL: number, squash: number): number {
 }
 
 function scale(glass: Glass, squash: number, slender: boolean): { marks: Mark[]; texts: EtchedText[] } {
-  const all = marksOf(glass).map(mark => ({ ...mark, h: heightOfMark(glass, mark.mL, squash) }));
+  const all = marksOf(glass).map((mark) => ({ ...mark, h: heightOfMark(glass, mark.mL, squash) }));
   if (all.length === 0 || !glass.marks) return { marks: [], texts: [] };
   const apart = (step_mL: number): number => {
     const top = glass.scaleFromTop ? 0 : glass.marks!.last_mL;
-    return Math.abs(heightOfMark(glass, top, squash) - heightOfMark(glass, top + (glass.scaleFromTop ? step_mL : -step_mL), squash));
+    return Math.abs(
+      heightOfMark(glass, top, squash) -
+        heightOfMark(glass, top + (glass.scaleFromTop ? step_mL : -step_mL), squash),
+    );
   };
   const step = widen(glass.marks.step_mL, apart, MARK_APART_MM);
   const numbered = widen(Math.max(step, glass.marks.numbered_mL), apart, NUMBER_APART_MM);

@@ -14,7 +14,13 @@ export type By = 'pointer' | 'keys';
 export type Hand =
   | { readonly at: 'rest' }
   | { readonly at: 'picked'; readonly from: string }
-  | { readonly at: 'carried'; readonly from: string; readonly by: By; readonly over: string | null; readonly poured: boolean }
+  | {
+      readonly at: 'carried';
+      readonly from: string;
+      readonly by: By;
+      readonly over: string | null;
+      readonly poured: boolean;
+    }
   | { readonly at: 'poised'; readonly from: string; readonly into: string }
   | {
       readonly at: 'pouring';
@@ -80,7 +86,8 @@ export function step(hand: Hand, event: HandEvent): Step {
       return stay({ at: 'carried', from: event.from, by: event.by, over: null, poured: false });
 
     case 'move':
-      if (hand.at === 'carried') return hand.over === event.over ? stay(hand) : stay({ ...hand, over: event.over });
+      if (hand.at === 'carried')
+        return hand.over === event.over ? stay(hand) : stay({ ...hand, over: event.over });
       if (hand.at === 'pouring' && hand.grip === 'carried' && hand.into !== event.over) {
         return {
           hand: { at: 'carried', from: hand.from, by: hand.by, over: event.over, poured: true },
@@ -92,7 +99,8 @@ export function step(hand: Hand, event: HandEvent): Step {
     case 'drop':
       if (hand.at === 'carried') {
         // A bottle that has already poured goes home; one that has not stays tipped, so that a tap or a hold can follow.
-        if (hand.over !== null && !hand.poured) return stay({ at: 'poised', from: hand.from, into: hand.over });
+        if (hand.over !== null && !hand.poured)
+          return stay({ at: 'poised', from: hand.from, into: hand.over });
         // By keys, Enter twice on the bottle picks it up: Enter on a vessel can follow.
         if (hand.by === 'keys' && hand.over === null) return stay({ at: 'picked', from: hand.from });
         return stay(REST);
@@ -104,7 +112,12 @@ export function step(hand: Hand, event: HandEvent): Step {
       if (hand.at === 'pouring') return stay(hand);
       const by = event.by ?? 'pointer';
       if (event.from !== undefined && event.into !== undefined) {
-        return begin(event.from, event.into, hand.at === 'poised' && hand.from === event.from && hand.into === event.into ? 'poised' : 'button', by);
+        return begin(
+          event.from,
+          event.into,
+          hand.at === 'poised' && hand.from === event.from && hand.into === event.into ? 'poised' : 'button',
+          by,
+        );
       }
       if (hand.at === 'poised') return begin(hand.from, hand.into, 'poised', by);
       if (hand.at === 'carried' && hand.over !== null) return begin(hand.from, hand.over, 'carried', hand.by);
@@ -116,7 +129,13 @@ export function step(hand: Hand, event: HandEvent): Step {
       if (hand.grip === 'carried') {
         return {
           // A pointer's pour ends by itself only where no more can flow: the bottle comes away. By keys it stays over.
-          hand: { at: 'carried', from: hand.from, by: hand.by, over: hand.by === 'keys' ? hand.into : null, poured: true },
+          hand: {
+            at: 'carried',
+            from: hand.from,
+            by: hand.by,
+            over: hand.by === 'keys' ? hand.into : null,
+            poured: true,
+          },
           effects: [END],
         };
       }

@@ -20,8 +20,8 @@ export interface Clock {
 
 const BROWSER: Clock = {
   now: () => performance.now(),
-  frame: call => requestAnimationFrame(call),
-  stop: handle => cancelAnimationFrame(handle),
+  frame: (call) => requestAnimationFrame(call),
+  stop: (handle) => cancelAnimationFrame(handle),
 };
 
 export interface HandState {
@@ -48,7 +48,7 @@ export function createHandStore(run: Pourable, clock: Clock = BROWSER): HandStor
     };
     return {
       hand: REST,
-      dispatch: event => {
+      dispatch: (event) => {
         const { hand, effects } = step(get().hand, event);
         for (const effect of effects) {
           if (effect.kind === 'startPour') {

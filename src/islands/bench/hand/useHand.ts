@@ -25,7 +25,7 @@ export interface Hands {
  */
 export function useHand(run: Pourable, onTap: (from: string, into: string) => void): Hands {
   const [store] = useState(() => createHandStore(run));
-  const hand = useStore(store, state => state.hand);
+  const hand = useStore(store, (state) => state.hand);
   const { dispatch } = store.getState();
   const timer = useRef<number | null>(null);
   const tap = useRef(onTap);

@@ -10,11 +10,11 @@ const LADDER: readonly { readonly below_uL: number; readonly step_uL: number }[]
 ];
 
 function stepUp(volume_uL: number): number {
-  return LADDER.find(rung => volume_uL < rung.below_uL)!.step_uL;
+  return LADDER.find((rung) => volume_uL < rung.below_uL)!.step_uL;
 }
 
 function stepDown(volume_uL: number): number {
-  return LADDER.find(rung => volume_uL <= rung.below_uL)!.step_uL;
+  return LADDER.find((rung) => volume_uL <= rung.below_uL)!.step_uL;
 }
 
 /** The next round volume above, at most `most_uL`. */
@@ -34,13 +34,17 @@ export function nudge(volume_uL: number, by_uL: number, most_uL: number): number
   return Math.min(most_uL, Math.max(DROP_UL, volume_uL + by_uL));
 }
 
-export type Parsed = { readonly ok: true; readonly volume_uL: number } | { readonly ok: false; readonly sentence: string };
+export type Parsed =
+  { readonly ok: true; readonly volume_uL: number } | { readonly ok: false; readonly sentence: string };
 
 /**
  * A typed volume in mL: digits with a point or a comma, at most three decimals, above 0.
  */
 export function parseVolume(text: string): Parsed {
-  const clean = text.trim().replace(/\s*ml$/i, '').replace(',', '.');
+  const clean = text
+    .trim()
+    .replace(/\s*ml$/i, '')
+    .replace(',', '.');
   if (clean === '') return { ok: false, sentence: 'Type a volume in mL, such as 1.00.' };
   if (!/^\d*\.?\d*$/.test(clean) || clean === '.') {
     return { ok: false, sentence: 'Write the volume as a number, such as 1.00.' };

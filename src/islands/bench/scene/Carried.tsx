@@ -29,21 +29,25 @@ export function Carried({ item }: Props) {
     const still = window.matchMedia('(prefers-reduced-motion: reduce)').matches;
     if (still || !scope.current || !free.current || (x === 0 && y === 0)) return;
     setReturning(free.current);
-    animate(scope.current, { transform: [`translate(${x}px, ${y}px)`, 'translate(0px, 0px)'] }, { duration: RETURN_S, ease: 'easeOut' }).then(
+    animate(
+      scope.current,
+      { transform: [`translate(${x}px, ${y}px)`, 'translate(0px, 0px)'] },
+      { duration: RETURN_S, ease: 'easeOut' },
+    ).then(
       () => setReturning(null),
       () => setReturning(null),
     );
   };
 
   useDndMonitor({
-    onDragStart: event => {
+    onDragStart: (event) => {
       const rect = event.active.rect.current.initial;
       const bottle = document.querySelector(`[data-bottle="${CSS.escape(String(event.active.id))}"]`);
       const box = bottle?.getBoundingClientRect() ?? rect;
       if (box) setHome({ left: box.left, top: box.top, width: box.width });
       at.current = { x: 0, y: 0 };
     },
-    onDragMove: event => {
+    onDragMove: (event) => {
       at.current = { x: event.delta.x, y: event.delta.y };
       if (scope.current) scope.current.style.transform = `translate(${event.delta.x}px, ${event.delta.y}px)`;
     },
@@ -57,7 +61,11 @@ export function Carried({ item }: Props) {
       ref={scope}
       className="carried"
       hidden={shown === null || home === null}
-      style={home ? ({ left: home.left, top: home.top, '--b': home.width / BOTTLE.width } as CSSProperties) : undefined}
+      style={
+        home
+          ? ({ left: home.left, top: home.top, '--b': home.width / BOTTLE.width } as CSSProperties)
+          : undefined
+      }
       aria-hidden="true"
     >
       {shown && <Bottle look={shown} liquid={shown.paint} level={shown.level} tip={returning ? 0 : 6} />}

@@ -8,7 +8,9 @@ interface SceneProps {
   id: string;
   title: string;
   lead: string | null;
-  words: ReactNode;
+  model: string;
+  /** A page's own words on the wall, in the place of title and shelf. */
+  hero: ReactNode;
   shelf: ReactNode;
   vessels: readonly VesselLook[];
   stations: readonly ReactNode[];
@@ -17,7 +19,7 @@ interface SceneProps {
 }
 
 /** Wall, shelf, vessels and slab. The scene is described in words for those who do not see it. */
-export function Scene({ id, title, lead, words, shelf, vessels, stations, description }: SceneProps) {
+export function Scene({ id, title, lead, model, hero, shelf, vessels, stations, description }: SceneProps) {
   const wide = wideLayout(vessels);
   const narrow = narrowLayout(vessels);
   const variables = {
@@ -30,17 +32,26 @@ export function Scene({ id, title, lead, words, shelf, vessels, stations, descri
   return (
     <div className="scene" style={variables} data-vessels={vessels.length}>
       <div className="wall-tiles" aria-hidden="true" />
-      <div className="wall-top">
-        <div className="wall-words">
-          <span className="tape tape-kind">Bench</span>
-          <h2 id={`${id}-title`}>{title}</h2>
-          {lead && <p className="wall-lead">{lead}</p>}
-          {words}
+      {hero == null ? (
+        <div className="wall-top">
+          <div className="wall-words">
+            <span className="tape tape-kind">Bench</span>
+            <h2 id={`${id}-title`}>{title}</h2>
+            {lead && <p className="wall-lead">{lead}</p>}
+            <p className="wall-model">{model}</p>
+          </div>
+          {shelf}
         </div>
-        {shelf}
-      </div>
+      ) : (
+        <div className="wall-hero">
+          <h2 className="visually-hidden" id={`${id}-title`}>
+            {title}
+          </h2>
+          {hero}
+        </div>
+      )}
       <div className="visually-hidden">
-        {description.map(sentence => (
+        {description.map((sentence) => (
           <p key={sentence}>{sentence}</p>
         ))}
       </div>
@@ -82,7 +93,12 @@ function Band({ row, wideRows, narrowRows }: { row: number; wideRows: number; na
 
 /** A dotted line between two equal glasses whose levels stand equally high. */
 export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook }) {
-  const same = left.level_mm !== null && left.volume_uL !== null && left.shape === right.shape && left.volume_uL === right.volume_uL && left.stirrer === right.stirrer;
+  const same =
+    left.level_mm !== null &&
+    left.volume_uL !== null &&
+    left.shape === right.shape &&
+    left.volume_uL === right.volume_uL &&
+    left.stirrer === right.stirrer;
   if (!same) return null;
   return (
     <span

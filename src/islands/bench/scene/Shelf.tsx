@@ -17,7 +17,7 @@ interface ShelfProps {
 export function Shelf({ items, chosen, picked, away, onPick }: ShelfProps) {
   return (
     <ul className="shelf" aria-label="Shelf" style={{ '--items': items.length } as CSSProperties}>
-      {items.map(item => (
+      {items.map((item) => (
         <li key={item.id} className="shelf-place">
           <ShelfBottle
             item={item}
@@ -40,7 +40,10 @@ const ShelfBottle = memo(function ShelfBottle(props: {
   onPick: (id: string) => void;
 }) {
   const { item, chosen, picked, away, onPick } = props;
-  const { setNodeRef, attributes, listeners } = useDraggable({ id: item.id, attributes: { roleDescription: 'bottle' } });
+  const { setNodeRef, attributes, listeners } = useDraggable({
+    id: item.id,
+    attributes: { roleDescription: 'bottle' },
+  });
   const hazards = item.hazards.map(hazardWords).join(', ');
   return (
     <button
@@ -54,7 +57,9 @@ const ShelfBottle = memo(function ShelfBottle(props: {
       data-picked={picked || undefined}
       data-away={away || undefined}
       aria-pressed={picked || away}
-      aria-label={[item.name, item.strength, hazards && `hazard: ${hazards}`, item.level <= 0 && 'empty'].filter(Boolean).join(', ')}
+      aria-label={[item.name, item.strength, hazards && `hazard: ${hazards}`, item.level <= 0 && 'empty']
+        .filter(Boolean)
+        .join(', ')}
       onClick={() => onPick(item.id)}
     >
       <Bottle look={item} liquid={item.paint} level={item.level} />

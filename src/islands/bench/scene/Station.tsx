@@ -126,7 +126,13 @@ export function Station(props: StationProps) {
             inside={vessel.stirrer ? <StirBar turning={vessel.stirring} /> : undefined}
             over={
               <>
-                {vessel.probe && <Probe x={-Math.max(0, Math.min(profile[0]!.r * 0.62, profile[profile.length - 1]!.r - 3.4))} foot_mm={7} length_mm={rim - 4} />}
+                {vessel.probe && (
+                  <Probe
+                    x={-Math.max(0, Math.min(profile[0]!.r * 0.62, profile[profile.length - 1]!.r - 3.4))}
+                    foot_mm={7}
+                    length_mm={rim - 4}
+                  />
+                )}
                 {stream && (
                   <>
                     <path className="stream-edge" d={fall} />
@@ -137,21 +143,36 @@ export function Station(props: StationProps) {
                   <g key={dripping.drops} transform={`translate(${entryX} ${-rim - OVER_RIM_MM})`}>
                     <g
                       className="falling"
-                      style={{ '--fall': `${rim + OVER_RIM_MM - 4 - (vessel.level_mm ?? 0)}px` } as CSSProperties}
+                      style={
+                        { '--fall': `${rim + OVER_RIM_MM - 4 - (vessel.level_mm ?? 0)}px` } as CSSProperties
+                      }
                     >
                       <Drop liquid={dripping.paint} />
                     </g>
                   </g>
                 )}
                 {dripping && dripping.drops > 0 && vessel.level_mm !== null && (
-                  <ellipse key={`ring-${dripping.drops}`} className="ring" cx={entryX} cy={-vessel.level_mm} rx="5" ry="0.9" />
+                  <ellipse
+                    key={`ring-${dripping.drops}`}
+                    className="ring"
+                    cx={entryX}
+                    cy={-vessel.level_mm}
+                    rx="5"
+                    ry="0.9"
+                  />
                 )}
               </>
             }
           />
           {over && (
             <span className="tipped" data-pouring={over.pouring || undefined} aria-hidden="true">
-              <Bottle look={over.look} liquid={over.paint} level={over.level} tip={over.pouring ? 74 : 56} capped={false} />
+              <Bottle
+                look={over.look}
+                liquid={over.paint}
+                level={over.level}
+                tip={over.pouring ? 74 : 56}
+                capped={false}
+              />
             </span>
           )}
           {!over && dripping && (

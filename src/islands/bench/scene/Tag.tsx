@@ -1,7 +1,15 @@
 import type { VesselLook } from './looks';
 
 /** A reading tag: pH large, then the colour as a chip and a word. It hangs from its glass by a leader line. */
-export function Tag({ vessel, side, settling }: { vessel: VesselLook; side: 'left' | 'right' | 'under'; settling: boolean }) {
+export function Tag({
+  vessel,
+  side,
+  settling,
+}: {
+  vessel: VesselLook;
+  side: 'left' | 'right' | 'under';
+  settling: boolean;
+}) {
   if (vessel.level_mm === null && vessel.ph.kind === 'none') {
     return (
       <div className="tag" data-side={side}>

@@ -24,10 +24,13 @@ function arrange(vessels: readonly Standing[], most: number, gap_mm: number): Sl
   const count = Math.max(1, vessels.length);
   const rows = Math.ceil(count / most);
   const columns = Math.ceil(count / rows);
-  const widths = vessels.map(vessel => measure(vessel.shape).width);
+  const widths = vessels.map((vessel) => measure(vessel.shape).width);
   // Columns are equally wide, so the widest glass decides.
   const span_mm = Math.max(1, columns) * (Math.max(20, ...widths) + gap_mm);
-  const tall_mm = Math.max(20, ...vessels.map(vessel => measure(vessel.shape).height + (vessel.stirrer ? STIRRER_MM : 0)));
+  const tall_mm = Math.max(
+    20,
+    ...vessels.map((vessel) => measure(vessel.shape).height + (vessel.stirrer ? STIRRER_MM : 0)),
+  );
   return {
     columns,
     rows,
@@ -37,10 +40,11 @@ function arrange(vessels: readonly Standing[], most: number, gap_mm: number): Sl
   };
 }
 
-export const wideLayout = (vessels: readonly Standing[]): SlabLayout => arrange(vessels, WIDE_COLUMNS, GAP_MM);
+export const wideLayout = (vessels: readonly Standing[]): SlabLayout =>
+  arrange(vessels, WIDE_COLUMNS, GAP_MM);
 
 /** On a phone two beakers stand side by side; narrow glasses stand three in a row. */
 export function narrowLayout(vessels: readonly Standing[]): SlabLayout {
-  const slender = vessels.every(vessel => measure(vessel.shape).width < 34);
+  const slender = vessels.every((vessel) => measure(vessel.shape).width < 34);
   return arrange(vessels, slender ? NARROW_COLUMNS + 1 : NARROW_COLUMNS, GAP_MM);
 }

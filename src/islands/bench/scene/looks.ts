@@ -60,7 +60,8 @@ export function describeVessel(vessel: VesselLook): string {
   if (vessel.ph.kind === 'value') parts.push(`pH ${vessel.ph.text}`);
   if (vessel.ph.kind === 'hidden') parts.push(vessel.ph.sentence.replace(/\.$/, '').toLowerCase());
   if (vessel.words) parts.push(vessel.words);
-  if (!vessel.mixed) parts.push(vessel.unmixed ? `not mixed, ${vessel.unmixed.words} where it came in` : 'not mixed');
+  if (!vessel.mixed)
+    parts.push(vessel.unmixed ? `not mixed, ${vessel.unmixed.words} where it came in` : 'not mixed');
   if (vessel.stoppered) parts.push('stoppered');
   if (vessel.stirring) parts.push('stirring');
   if (vessel.full) parts.push('full');

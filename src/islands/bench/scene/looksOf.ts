@@ -6,7 +6,9 @@ import { formatPh, type PhReading, type ShelfLook, type VesselLook } from './loo
 
 /** Why a vessel's pH is not told, in one sentence. */
 function hiddenSentence(spec: BenchSpec, vessel: string): string {
-  const rule = spec.hide?.find(hide => hide.what.includes('pH') && (hide.of === undefined || hide.of.includes(vessel)));
+  const rule = spec.hide?.find(
+    (hide) => hide.what.includes('pH') && (hide.of === undefined || hide.of.includes(vessel)),
+  );
   if (rule?.until === 'prediction') return 'Hidden until you predict';
   if (rule?.until === 'never') return 'Hidden on this bench';
   return 'Hidden for now';
@@ -20,7 +22,7 @@ function phOf(spec: BenchSpec, reading: VesselReading): PhReading {
 function vesselLook(spec: BenchSpec, reading: VesselReading): VesselLook {
   const glass = glassware[reading.glass];
   const shape = shapeOf(reading.glass);
-  const plan = spec.vessels.find(vessel => vessel.id === reading.id);
+  const plan = spec.vessels.find((vessel) => vessel.id === reading.id);
   const brim = levelOf(glass, glass.capacity_mL) * 10 * shape.squash;
   return {
     id: reading.id,
@@ -35,13 +37,22 @@ function vesselLook(spec: BenchSpec, reading: VesselReading): VesselLook {
     doubt: reading.doubt ?? null,
     temperature_C: reading.temperature_C ?? null,
     // The region's depth on the drawing grows with its share; a sliver would not be seen.
-    unmixed: reading.layer ? { paint: paint(reading.layer), words: reading.layer.words, depth: 0.35 + 0.6 * Math.min(1, reading.layer.share) } : null,
+    unmixed: reading.layer
+      ? {
+          paint: paint(reading.layer),
+          words: reading.layer.words,
+          depth: 0.35 + 0.6 * Math.min(1, reading.layer.share),
+        }
+      : null,
     mixed: reading.mixed,
     probe: reading.probe,
     stirrer: plan?.stirrer !== undefined,
     stirring: reading.stirring,
     stoppered: reading.stoppered,
-    room_uL: reading.volume_mL === undefined ? null : Math.max(0, Math.round((glass.capacity_mL - reading.volume_mL) * 1000)),
+    room_uL:
+      reading.volume_mL === undefined
+        ? null
+        : Math.max(0, Math.round((glass.capacity_mL - reading.volume_mL) * 1000)),
     full: reading.full ? { h: brim, text: `Full at ${glass.capacity_mL.toFixed(1)} mL` } : null,
   };
 }
@@ -51,7 +62,7 @@ function firstVolume(item: ShelfItem | undefined): number {
 }
 
 function shelfLook(spec: BenchSpec, reading: BottleReading, hazards: readonly string[]): ShelfLook {
-  const first = firstVolume(spec.shelf.find(item => item.id === reading.id));
+  const first = firstVolume(spec.shelf.find((item) => item.id === reading.id));
   return {
     id: reading.id,
     name: reading.label,
@@ -74,9 +85,12 @@ export interface Looks {
  * again while another one fills.
  * @param hazardsOf the marks that a bottle's concentration carries
  */
-export function createLooks(spec: BenchSpec, hazardsOf: (item: ShelfItem) => readonly string[]): (readings: Readings) => Looks {
+export function createLooks(
+  spec: BenchSpec,
+  hazardsOf: (item: ShelfItem) => readonly string[],
+): (readings: Readings) => Looks {
   const known = new Map<string, { readonly text: string; readonly look: VesselLook | ShelfLook }>();
-  const hazards = new Map(spec.shelf.map(item => [item.id, hazardsOf(item)]));
+  const hazards = new Map(spec.shelf.map((item) => [item.id, hazardsOf(item)]));
   const stable = <T extends VesselLook | ShelfLook>(key: string, reading: object, draw: () => T): T => {
     const text = JSON.stringify(reading);
     const before = known.get(key);
@@ -85,8 +99,12 @@ export function createLooks(spec: BenchSpec, hazardsOf: (item: ShelfItem) => rea
     known.set(key, { text, look });
     return look;
   };
-  return readings => ({
-    vessels: readings.vessels.map(reading => stable(`vessel ${reading.id}`, reading, () => vesselLook(spec, reading))),
-    shelf: readings.bottles.map(reading => stable(`bottle ${reading.id}`, reading, () => shelfLook(spec, reading, hazards.get(reading.id) ?? []))),
+  return (readings) => ({
+    vessels: readings.vessels.map((reading) =>
+      stable(`vessel ${reading.id}`, reading, () => vesselLook(spec, reading)),
+    ),
+    shelf: readings.bottles.map((reading) =>
+      stable(`bottle ${reading.id}`, reading, () => shelfLook(spec, reading, hazards.get(reading.id) ?? [])),
+    ),
   });
 }

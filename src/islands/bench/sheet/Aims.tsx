@@ -9,14 +9,19 @@ export interface AimLook {
   readonly note: string;
 }
 
-const STATE_WORDS = { met: 'done', checking: 'being checked', next: 'under way', open: 'not started' } as const;
+const STATE_WORDS = {
+  met: 'done',
+  checking: 'being checked',
+  next: 'under way',
+  open: 'not started',
+} as const;
 
 export const Aims = memo(function Aims({ aims }: { aims: readonly AimLook[] }) {
   return (
     <section className="part" aria-labelledby={undefined}>
       <h3>Aims</h3>
       <ul className="aims">
-        {aims.map(aim => (
+        {aims.map((aim) => (
           <li key={aim.id} className="aim" data-aim={aim.id} data-state={aim.state}>
             {aim.state === 'met' ? <DoneIcon /> : aim.state === 'open' ? <OpenIcon /> : <UnderWayIcon />}
             <span className="visually-hidden">{STATE_WORDS[aim.state]}: </span>

@@ -14,10 +14,14 @@ export const IndicatorRuler = memo(function IndicatorRuler({ ruler }: { ruler: R
   const [ref, width] = useWidth<HTMLDivElement>(372);
   return (
     <section className="part">
-      <h3>
-        Indicator ruler {ruler && <span className="h3-note">{ruler.indicator.toLowerCase()}</span>}
-      </h3>
-      <div ref={ref}>{ruler ? <Ruler ruler={ruler} width={width} /> : <p className="empty">No indicator stands in a vessel yet.</p>}</div>
+      <h3>Indicator ruler {ruler && <span className="h3-note">{ruler.indicator.toLowerCase()}</span>}</h3>
+      <div ref={ref}>
+        {ruler ? (
+          <Ruler ruler={ruler} width={width} />
+        ) : (
+          <p className="empty">No indicator stands in a vessel yet.</p>
+        )}
+      </div>
       {ruler && <p className="says">{ruler.sentence}</p>}
     </section>
   );
@@ -28,7 +32,7 @@ function Ruler({ ruler, width }: { ruler: RulerLook; width: number }) {
   const to = width - 12;
   const x = (pH: number): number => from + (Math.min(14, Math.max(0, pH)) / 14) * (to - from);
   const tags = place(ruler.markers, x, width);
-  const lanes = Math.max(1, ...tags.map(tag => tag.lane + 1));
+  const lanes = Math.max(1, ...tags.map((tag) => tag.lane + 1));
   const top = 8 + lanes * 32;
   const cell = (to - from) / ruler.cells.length;
   return (
@@ -37,17 +41,24 @@ function Ruler({ ruler, width }: { ruler: RulerLook; width: number }) {
         <rect key={i} x={from + i * cell} y={top} width={cell + 0.6} height={34} fill={hex} />
       ))}
       <rect className="figure-frame" x={from} y={top} width={to - from} height={34} />
-      {Array.from({ length: 29 }, (_, i) => i / 2).map(pH => (
-        <line key={pH} className="figure-tick" x1={x(pH)} x2={x(pH)} y1={top + 34} y2={top + (pH % 1 === 0 ? 43 : 39)} />
+      {Array.from({ length: 29 }, (_, i) => i / 2).map((pH) => (
+        <line
+          key={pH}
+          className="figure-tick"
+          x1={x(pH)}
+          x2={x(pH)}
+          y1={top + 34}
+          y2={top + (pH % 1 === 0 ? 43 : 39)}
+        />
       ))}
       {Array.from({ length: 15 }, (_, i) => i)
-        .filter(pH => width > 480 || pH % 2 === 0)
-        .map(pH => (
+        .filter((pH) => width > 480 || pH % 2 === 0)
+        .map((pH) => (
           <text key={pH} className="figure-number" x={x(pH)} y={top + 59} textAnchor="middle">
             {pH}
           </text>
         ))}
-      {tags.map(tag => (
+      {tags.map((tag) => (
         <g key={tag.id}>
           <line className="ruler-now" x1={tag.at} x2={tag.at} y1={4 + tag.lane * 32 + 26} y2={top + 34} />
           <path
@@ -81,7 +92,12 @@ function place(markers: RulerLook['markers'], x: (pH: number) => number, width: 
     const at = x(marker.pH);
     const left = Math.min(width - wide - 1, Math.max(1, at - wide / 2));
     let lane = 0;
-    while (placed.some(other => other.lane === lane && left < other.left + other.wide + 8 && other.left < left + wide + 8)) lane += 1;
+    while (
+      placed.some(
+        (other) => other.lane === lane && left < other.left + other.wide + 8 && other.left < left + wide + 8,
+      )
+    )
+      lane += 1;
     placed.push({ id: marker.id, text, at, left, wide, lane });
   }
   return placed;

@@ -13,7 +13,10 @@ const mmol = (value: number): string => value.toFixed(3).replace('-', '\u2212');
 /** Amounts before and after the last addition that still stands, as a table. */
 export default function MoleLedger({ state, vessel, seen }: Props) {
   const found = ledger(state, vessel, seen);
-  const label = state.scene.vessels[vessel]?.label ?? state.spec.vessels.find(one => one.id === vessel)?.label ?? vessel;
+  const label =
+    state.scene.vessels[vessel]?.label ??
+    state.spec.vessels.find((one) => one.id === vessel)?.label ??
+    vessel;
   return (
     <section className="part">
       <h3>
@@ -37,7 +40,7 @@ export default function MoleLedger({ state, vessel, seen }: Props) {
               </tr>
             </thead>
             <tbody>
-              {found.rows.map(row => (
+              {found.rows.map((row) => (
                 <tr key={row.species}>
                   <th scope="row">{chemicalName(row.species)}</th>
                   <td className="number">{mmol(row.before_mmol)}</td>
@@ -50,10 +53,18 @@ export default function MoleLedger({ state, vessel, seen }: Props) {
               ))}
             </tbody>
           </table>
-          <p className="says">{withChemicalNames(found.sentence, found.rows.map(row => row.species))}</p>
+          <p className="says">
+            {withChemicalNames(
+              found.sentence,
+              found.rows.map((row) => row.species),
+            )}
+          </p>
         </>
       ) : (
-        <p className="empty">It shows the amounts before and after the last addition. Nothing has been added yet, or they are hidden.</p>
+        <p className="empty">
+          It shows the amounts before and after the last addition. Nothing has been added yet, or they are
+          hidden.
+        </p>
       )}
     </section>
   );

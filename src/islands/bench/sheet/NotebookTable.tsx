@@ -18,11 +18,17 @@ export interface NoteLook {
 const SHOWN_FIRST = 12;
 
 /** Every move with what could be read after it. The newest line is last; long runs show their end first. */
-export const NotebookTable = memo(function NotebookTable({ notes, moved }: { notes: readonly NoteLook[]; moved: boolean }) {
+export const NotebookTable = memo(function NotebookTable({
+  notes,
+  moved,
+}: {
+  notes: readonly NoteLook[];
+  moved: boolean;
+}) {
   const [all, setAll] = useState(false);
   const hiddenCount = all ? 0 : Math.max(0, notes.length - SHOWN_FIRST);
   const shown = notes.slice(hiddenCount);
-  const last = notes.filter(note => !note.struck).at(-1)?.n;
+  const last = notes.filter((note) => !note.struck).at(-1)?.n;
   return (
     <section className="part">
       <h3>Notebook</h3>
@@ -51,8 +57,12 @@ export const NotebookTable = memo(function NotebookTable({ notes, moved }: { not
           </tr>
         </thead>
         <tbody>
-          {shown.map(note => (
-            <tr key={note.key} data-struck={note.struck || undefined} data-last={(moved && note.n === last && !note.struck) || undefined}>
+          {shown.map((note) => (
+            <tr
+              key={note.key}
+              data-struck={note.struck || undefined}
+              data-last={(moved && note.n === last && !note.struck) || undefined}
+            >
               <td className="wide-only line-number">{note.n === 0 ? '' : note.n}</td>
               <th scope="row">{note.vessel}</th>
               <td className="wide-only">

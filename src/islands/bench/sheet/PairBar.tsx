@@ -13,7 +13,8 @@ export interface PairLook {
   readonly sentence: string;
 }
 
-const three = (mmol: number): string => (mmol >= 10 ? mmol.toFixed(1) : mmol >= 0.1 ? mmol.toFixed(2) : mmol.toFixed(3));
+const three = (mmol: number): string =>
+  mmol >= 10 ? mmol.toFixed(1) : mmol >= 0.1 ? mmol.toFixed(2) : mmol.toFixed(3);
 /** Acid's share of the pair at pKa + 1 and pKa - 1. */
 const LEAST_ACID = 1 / 11;
 const MOST_ACID = 10 / 11;
@@ -23,10 +24,14 @@ export const PairBar = memo(function PairBar({ pair }: { pair: PairLook | null }
   const [ref, width] = useWidth<HTMLDivElement>(560);
   return (
     <section className="part">
-      <h3>
-        Pair bar {pair && <span className="h3-note">in the {pair.vessel.toLowerCase()}, mmol</span>}
-      </h3>
-      <div ref={ref}>{pair ? <Bar pair={pair} width={width} /> : <p className="empty">No weak acid with its partner stands on this bench yet.</p>}</div>
+      <h3>Pair bar {pair && <span className="h3-note">in the {pair.vessel.toLowerCase()}, mmol</span>}</h3>
+      <div ref={ref}>
+        {pair ? (
+          <Bar pair={pair} width={width} />
+        ) : (
+          <p className="empty">No weak acid with its partner stands on this bench yet.</p>
+        )}
+      </div>
       {pair && <p className="says">{pair.sentence}</p>}
     </section>
   );
@@ -69,17 +74,36 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
           now
         </text>
       )}
-      <rect className="pair-base" x={now} y={30} width={Math.max(0, width - 1 - now)} height={48} fill={`url(#${hatch})`} />
+      <rect
+        className="pair-base"
+        x={now}
+        y={30}
+        width={Math.max(0, width - 1 - now)}
+        height={48}
+        fill={`url(#${hatch})`}
+      />
       <rect className="pair-acid" x={1} y={30} width={Math.max(0, now - 1)} height={48} />
       <rect className="pair-frame" x={1} y={30} width={width - 2} height={48} />
       {acidRoom && (
-        <text className="pair-name pair-name-white" x={Math.min(now - 12, Math.max(16, least + 14))} y={60} textAnchor={least + 14 + acidText.length * 11 < now ? 'start' : 'end'}>
+        <text
+          className="pair-name pair-name-white"
+          x={Math.min(now - 12, Math.max(16, least + 14))}
+          y={60}
+          textAnchor={least + 14 + acidText.length * 11 < now ? 'start' : 'end'}
+        >
           {acidText}
         </text>
       )}
       {baseRoom && (
         <>
-          <rect fill="#fff" x={Math.min(most - 8, width - 8) - baseWide} y={39} width={baseWide} height={30} rx={3} />
+          <rect
+            fill="#fff"
+            x={Math.min(most - 8, width - 8) - baseWide}
+            y={39}
+            width={baseWide}
+            height={30}
+            rx={3}
+          />
           <text className="pair-name" x={Math.min(most - 8, width - 8) - 8} y={60} textAnchor="end">
             {baseText}
           </text>
@@ -88,7 +112,13 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
       <line className="pair-limit" x1={least} x2={least} y1={22} y2={100} />
       <line className="pair-limit" x1={most} x2={most} y1={22} y2={100} />
       {Math.abs(start - now) > 3 && (
-        <line className={start < now ? 'pair-start pair-start-white' : 'pair-start'} x1={start} x2={start} y1={34} y2={74} />
+        <line
+          className={start < now ? 'pair-start pair-start-white' : 'pair-start'}
+          x1={start}
+          x2={start}
+          y1={34}
+          y2={74}
+        />
       )}
       <line className="pair-now" x1={now} x2={now} y1={24} y2={84} />
       <Bracket from={least} to={now} text={`${three(roomForBase)} base`} width={width} />
@@ -103,7 +133,12 @@ function Bracket({ from, to, text, width }: { from: number; to: number; text: st
   return (
     <>
       <path className="pair-bracket" d={`M ${from + 2} 90 V 99 H ${to - 2} V 90`} />
-      <text className="figure-name" x={clamp((from + to) / 2, text.length * 4, width - text.length * 4)} y={119} textAnchor="middle">
+      <text
+        className="figure-name"
+        x={clamp((from + to) / 2, text.length * 4, width - text.length * 4)}
+        y={119}
+        textAnchor="middle"
+      >
         {text}
       </text>
     </>

@@ -10,7 +10,11 @@ import { Trace } from './Trace';
 const MoleLedger = lazy(() => import('./MoleLedger'));
 const SpeciesBars = lazy(() => import('./SpeciesBars'));
 
-const NAMES: Partial<Record<ViewKind, string>> = { 'pair-bar': 'Pair bar', ledger: 'Mole ledger', species: 'Species bars' };
+const NAMES: Partial<Record<ViewKind, string>> = {
+  'pair-bar': 'Pair bar',
+  ledger: 'Mole ledger',
+  species: 'Species bars',
+};
 const AT_ONCE = 2;
 
 /** The first state of a run: the set-up. */
@@ -32,7 +36,9 @@ interface Props {
 /** One porcelain sheet under the bench: aims, notebook and trace, then at most two further views of the same liquid. */
 export function Sheet({ spec, run, seen, vessel, asksServer }: Props) {
   const { state } = run;
-  const offered = (Object.keys(NAMES) as ViewKind[]).filter(view => spec.views === undefined || spec.views.includes(view));
+  const offered = (Object.keys(NAMES) as ViewKind[]).filter(
+    (view) => spec.views === undefined || spec.views.includes(view),
+  );
   const [open, setOpen] = useState<readonly ViewKind[]>(offered.slice(0, 1));
   const start = useMemo(() => startOf(state), [state]);
   const notes = useMemo(() => notesOf(spec, state, seen), [spec, state, seen]);
@@ -41,7 +47,9 @@ export function Sheet({ spec, run, seen, vessel, asksServer }: Props) {
   const aims = aimsOf(spec, run.readings, run.metAims, run.locallyMet, asksServer);
   const showsTrace = spec.views === undefined || spec.views.includes('trace');
   const toggle = (view: ViewKind) =>
-    setOpen(now => (now.includes(view) ? now.filter(one => one !== view) : [...now, view].slice(-AT_ONCE)));
+    setOpen((now) =>
+      now.includes(view) ? now.filter((one) => one !== view) : [...now, view].slice(-AT_ONCE),
+    );
   return (
     <div className="sheet">
       <div>
@@ -52,7 +60,7 @@ export function Sheet({ spec, run, seen, vessel, asksServer }: Props) {
       {offered.length > 0 && (
         <div className="sheet-views">
           <div className="view-choice" role="group" aria-label="Further views, two at once">
-            {offered.map(view => (
+            {offered.map((view) => (
               <button
                 key={view}
                 type="button"
@@ -67,9 +75,10 @@ export function Sheet({ spec, run, seen, vessel, asksServer }: Props) {
           </div>
           <div className="sheet-views-row" data-equal>
             <Suspense fallback={<p className="empty">Fetching the view</p>}>
-              {open.map(view => {
+              {open.map((view) => {
                 if (view === 'pair-bar') return <PairBar key={view} pair={pair} />;
-                if (view === 'ledger') return <MoleLedger key={view} state={state} vessel={vessel} seen={seen} />;
+                if (view === 'ledger')
+                  return <MoleLedger key={view} state={state} vessel={vessel} seen={seen} />;
                 return <SpeciesBars key={view} state={state} vessel={vessel} seen={seen} />;
               })}
             </Suspense>

@@ -7,7 +7,7 @@ export function useWidth<T extends HTMLElement>(before: number): [RefObject<T | 
   useEffect(() => {
     const element = ref.current;
     if (!element) return;
-    const observer = new ResizeObserver(entries => {
+    const observer = new ResizeObserver((entries) => {
       const seen = Math.round(entries[0]!.contentRect.width);
       if (seen > 0) setWidth(seen);
     });

@@ -21,7 +21,8 @@ export function AgainDialog({ open, moves, onKeep, onAgain }: Props) {
     <dialog ref={ref} className="dialog" aria-labelledby={`${id}-title`} onClose={onKeep}>
       <h2 id={`${id}-title`}>Start this bench again?</h2>
       <p>
-        {moves === 1 ? 'Your move stays' : `Your ${moves} moves stay`} in the notebook. The vessels go back to how they stood.
+        {moves === 1 ? 'Your move stays' : `Your ${moves} moves stay`} in the notebook. The vessels go back to
+        how they stood.
       </p>
       <div className="dialog-buttons">
         <button type="button" className="button button-quiet" onClick={onKeep}>

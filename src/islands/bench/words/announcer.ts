@@ -10,7 +10,7 @@ export interface Timers {
 const BROWSER: Timers = {
   now: () => performance.now(),
   after: (ms, call) => window.setTimeout(call, ms),
-  clear: handle => window.clearTimeout(handle),
+  clear: (handle) => window.clearTimeout(handle),
 };
 
 export interface Announcer {
@@ -27,7 +27,7 @@ export function createAnnouncer(speak: (message: string) => void, timers: Timers
     speak(message);
   };
   return {
-    say: message => {
+    say: (message) => {
       const wait = QUIET_MS - (timers.now() - last);
       if (waiting !== null) {
         waiting.message = message;

@@ -27,15 +27,18 @@ function startOf(state: BenchState): BenchState {
 interface Props {
   spec: BenchSpec;
   run: RunView;
-  seen: Seen;
   /** The vessel that the sentence names; the views show it. */
   vessel: string;
   asksServer: boolean;
 }
 
 /** One porcelain sheet under the bench: aims, notebook and trace, then at most two further views of the same liquid. */
-export function Sheet({ spec, run, seen, vessel, asksServer }: Props) {
-  const { state } = run;
+export function Sheet({ spec, run, vessel, asksServer }: Props) {
+  const { state, predicted, metAims, locallyMet } = run;
+  const seen = useMemo<Seen>(
+    () => ({ predicted: predicted === true, metAims: [...metAims, ...locallyMet] }),
+    [predicted, metAims, locallyMet],
+  );
   const offered = (Object.keys(NAMES) as ViewKind[]).filter(
     (view) => spec.views === undefined || spec.views.includes(view),
   );

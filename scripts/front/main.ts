@@ -1,7 +1,7 @@
 // The web process: the front before Astro's handler. Built into dist/front.mjs, beside what Astro builds.
 import { pathToFileURL } from 'node:url';
 import { join, resolve } from 'node:path';
-import { readFileSync } from 'node:fs';
+import { migrations } from '../../src/server/database/migrations/index.ts';
 import { captureConsole, createLog } from './log.ts';
 import { createReadiness } from './schema.ts';
 import { createFront, type Handler } from './server.ts';
@@ -15,13 +15,15 @@ captureConsole(log);
 const { handler } = (await import(pathToFileURL(join(dist, 'server/entry.mjs')).href)) as {
   handler: Handler;
 };
-const { migrations } = JSON.parse(readFileSync(join(dist, 'build.json'), 'utf8')) as { migrations: string[] };
 
 const { server, drain } = createFront({
   settings,
   handler,
   client: join(dist, 'client'),
-  askReadiness: createReadiness(settings.database, migrations),
+  askReadiness: createReadiness(
+    settings.database,
+    migrations.map(({ name }) => name),
+  ),
   log,
   instance: process.env.DROPWISE_INSTANCE,
 });

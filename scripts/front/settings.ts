@@ -74,13 +74,17 @@ export function readSettings(environment: NodeJS.ProcessEnv): FrontSettings {
   }
   const values = parsed.data;
   const publicUrl = new URL(values.PUBLIC_URL);
-  const production = values.NODE_ENV === 'production';
+  // NODE_ENV=production also makes libraries fast, and the demo wants that too: it is told apart by DEMO.
+  const production = values.NODE_ENV === 'production' && !values.DEMO;
   if (publicUrl.pathname !== '/' || publicUrl.search || publicUrl.hash || publicUrl.username)
     throw new Error('PUBLIC_URL: a scheme and a host alone, such as https://dropwise.example.org');
   if (!['http:', 'https:'].includes(publicUrl.protocol)) throw new Error('PUBLIC_URL: https:// is expected');
   if (production && publicUrl.protocol !== 'https:')
     throw new Error('PUBLIC_URL: production needs https://, since sign-in cookies are only sent over TLS');
-  if (production && values.DEMO) throw new Error('DEMO: the demo does not run in production');
+  if (values.DEMO && publicUrl.protocol === 'https:')
+    throw new Error(
+      'DEMO: the demo’s sign-ins are printed when it starts, so it is not for a public address',
+    );
   return {
     production,
     host: values.HOST,

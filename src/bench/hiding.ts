@@ -37,17 +37,17 @@ const ALL: readonly Hideable[] = ['pH', 'colour', 'volume', 'temperature', 'cont
 export const hiddenOf = (spec: BenchSpec, seen: Seen, id: string): Hideable[] =>
   ALL.filter((what) => isHidden(spec, seen, what, id));
 
-/**
- * Whether amounts or species of a vessel may be shown: they would tell the pH and the contents.
- */
+/** Whether amounts and species of a vessel are hidden: they would tell pH, contents and what was poured. */
 export const amountsHidden = (spec: BenchSpec, seen: Seen, id: string): boolean =>
-  isHidden(spec, seen, 'ledger', id) ||
-  isHidden(spec, seen, 'pH', id) ||
-  isHidden(spec, seen, 'contents', id);
+  (['ledger', 'pH', 'contents', 'volume'] as const).some((what) => isHidden(spec, seen, what, id));
 
-/** Whether the trace of a vessel may be shown. */
+/** Whether any vessel hides this: sums over the bench (waste, stock) would tell it. */
+export const anyHidden = (spec: BenchSpec, seen: Seen, what: Hideable): boolean =>
+  spec.vessels.some((v) => isHidden(spec, seen, what, v.id));
+
+/** Whether the trace of a vessel is hidden: it is drawn from pH and volumes. */
 export const traceHidden = (spec: BenchSpec, seen: Seen, id: string): boolean =>
-  isHidden(spec, seen, 'trace', id) || isHidden(spec, seen, 'pH', id);
+  isHidden(spec, seen, 'trace', id) || isHidden(spec, seen, 'pH', id) || isHidden(spec, seen, 'volume', id);
 
 /** Graded samples: readings of this bench come from the server. */
 export const isGraded = (spec: BenchSpec): boolean => (spec.samples ?? []).some((s) => s.graded);

@@ -2,7 +2,7 @@
 import { definitionOf, lastStanding, situationOf, statesOf } from './apply.ts';
 import { isHidden } from './hiding.ts';
 import { nameOf } from './moves/hands.ts';
-import { readOne } from './read.ts';
+import { openNotices, readOne } from './read.ts';
 import { mLShown } from './precision.ts';
 import type { BenchState, ColourReading, Move, Seen } from './types.ts';
 
@@ -138,8 +138,6 @@ export function notebook(state: BenchState, seen: Seen = {}): NotebookRow[] {
     if (s.move.kind === 'startAgain') trial += 1;
     const added = addedBy(s.before, s, s.move);
     const volumesShown = !ends(s.move).some((id) => isHidden(s.spec, seen, 'volume', id));
-    const tells = (sentence: string) =>
-      !/\bpH\b/.test(sentence) || !s.spec.vessels.some((v) => isHidden(s.spec, seen, 'pH', v.id));
     return {
       n: s.count,
       kind: s.move.kind,
@@ -149,7 +147,7 @@ export function notebook(state: BenchState, seen: Seen = {}): NotebookRow[] {
       readings: aimedAt(s.before, s, s.move).flatMap((id) => readingOf(s, id, seen)),
       trial,
       takenBack: s.move.kind !== 'undo' && !stands.has(s),
-      notices: s.notices.map((n) => n.sentence).filter(tells),
+      notices: openNotices(s, seen).map((n) => n.sentence),
     };
   });
 }

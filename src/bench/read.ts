@@ -2,12 +2,11 @@
 import type { Solution } from '../chemistry/types.ts';
 import { sampleIn } from './create.ts';
 import { buretteReading, glassware, levelOf, pathOf, type Glass } from './glassware.ts';
-import { hiddenOf, isHidden } from './hiding.ts';
-import { colourOf, drawn, solve } from './liquid.ts';
+import { anyHidden, hiddenOf, isHidden } from './hiding.ts';
+import { bottleOf, colourOf, drawn, solve } from './liquid.ts';
 import { displayed, meterCalibrated } from './meter.ts';
-import { situationOf } from './apply.ts';
 import { FILM_NL, volumeOf } from './moves/hands.ts';
-import { wasteSentence } from './moves/glass.ts';
+import { wasteSentence } from './waste.ts';
 import { mL, mLShown, pHShown, shown } from './precision.ts';
 import type {
   BenchSpec,
@@ -118,6 +117,17 @@ export function readOne(state: BenchState, id: string, seen: Seen = {}): VesselR
   return spec && vessel ? readVessel({ state, seen, spec, glass: glassware[spec.glass], vessel }) : null;
 }
 
+/** What was told about the last move, without sentences that hold a hidden number. */
+export function openNotices(state: BenchState, seen: Seen): BenchState['notices'] {
+  const pHOpen = !anyHidden(state.spec, seen, 'pH');
+  const volumeOpen = !anyHidden(state.spec, seen, 'volume');
+  return state.notices.filter(
+    (n) =>
+      n.kind !== 'said' ||
+      ((pHOpen || !/\bpH\b/.test(n.sentence)) && (volumeOpen || !/\bmL\b/.test(n.sentence))),
+  );
+}
+
 function readBottle(state: BenchState, seen: Seen, item: ShelfItem): BottleReading {
   const liquid = state.scene.bottles[item.id];
   const volume = liquid?.volume_nL ?? 0;
@@ -126,7 +136,9 @@ function readBottle(state: BenchState, seen: Seen, item: ShelfItem): BottleReadi
     id: item.id,
     label: item.label,
     kind: item.kind,
-    left_mL: mLShown(volume),
+    left_mL: anyHidden(state.spec, seen, 'volume')
+      ? mLShown(bottleOf(item, state.spec.temperature_C, state.seed).volume_nL)
+      : mLShown(volume),
     empty: volume === 0,
     ...(liquid &&
       volume > 0 &&
@@ -144,17 +156,17 @@ function readBottle(state: BenchState, seen: Seen, item: ShelfItem): BottleReadi
 export function read(state: BenchState, seen: Seen = {}): Readings {
   const { spec, scene } = state;
   const { waste, probe } = scene;
-  const wasteOpen = !spec.vessels.some((v) => isHidden(spec, seen, 'pH', v.id));
+  const pHOpen = !anyHidden(spec, seen, 'pH');
+  const volumeOpen = !anyHidden(spec, seen, 'volume');
   return {
     model: spec.model,
     vessels: spec.vessels.flatMap((v) => readOne(state, v.id, seen) ?? []),
     bottles: spec.shelf.map((item) => readBottle(state, seen, item)),
     waste: {
-      volume_mL: mLShown(waste.volume_nL),
-      ...(wasteOpen && waste.volume_nL > 0 && { pH: pHShown(solve(waste, spec.model).pH) }),
-      sentence: wasteOpen
-        ? wasteSentence(situationOf(state), waste)
-        : `The waste holds ${mL(waste.volume_nL)}.`,
+      empty: waste.volume_nL === 0,
+      ...(volumeOpen && { volume_mL: mLShown(waste.volume_nL) }),
+      ...(pHOpen && waste.volume_nL > 0 && { pH: pHShown(solve(waste, spec.model).pH) }),
+      sentence: wasteSentence(waste, spec.model, { volume: volumeOpen, pH: pHOpen }),
     },
     spills: scene.spills.map((s) => ({
       from: s.from,
@@ -170,7 +182,7 @@ export function read(state: BenchState, seen: Seen = {}): Readings {
     }),
     goggles: scene.goggles,
     gloves: scene.gloves,
-    notices: state.notices.filter((n) => n.kind !== 'said' || wasteOpen || !n.sentence.includes('pH')),
+    notices: openNotices(state, seen),
   };
 }
 

@@ -383,6 +383,7 @@ export interface BottleReading {
   readonly id: string;
   readonly label: string;
   readonly kind: ShelfItem['kind'];
+  /** Where a vessel's volume is hidden, the stock at the start: what is left would tell what was poured. */
   readonly left_mL: number;
   readonly empty: boolean;
   readonly colour?: ColourReading;
@@ -393,7 +394,13 @@ export interface Readings {
   readonly model: Model;
   readonly vessels: readonly VesselReading[];
   readonly bottles: readonly BottleReading[];
-  readonly waste: { readonly volume_mL: number; readonly pH?: number; readonly sentence: string };
+  readonly waste: {
+    readonly empty: boolean;
+    /** Absent where a vessel's volume is hidden. */
+    readonly volume_mL?: number;
+    readonly pH?: number;
+    readonly sentence: string;
+  };
   readonly spills: readonly {
     readonly from: string;
     readonly volume_mL: number;

@@ -1,5 +1,5 @@
 /** Moves on a single glass: swirl, stir, stopper, warm, bubble, rinse, empty, label, read. */
-import { join, sealed, solve, take } from '../liquid.ts';
+import { join, sealed, take } from '../liquid.ts';
 import { mL, shown } from '../precision.ts';
 import type { Notice, Refusal, Scene, Vessel, VesselSpec } from '../types.ts';
 import { first, spill } from './deliver.ts';
@@ -7,7 +7,6 @@ import {
   FILM_NL,
   findSource,
   findVessel,
-  LOCAL_RULES,
   mixed,
   nameOf,
   settle,
@@ -19,6 +18,7 @@ import {
 } from './hands.ts';
 import { define, refuse, type Situation } from './kinds.ts';
 import { bubbled, GASES } from '../gas.ts';
+import { wasteSentence } from '../waste.ts';
 
 type Found = NonNullable<ReturnType<typeof findVessel>>;
 
@@ -264,19 +264,8 @@ export const discard = define<'discard'>({
   tell: (at, m) => `${nameOf(at, m.vessel)} emptied into the waste`,
 });
 
-/** Mixed waste near neutral goes down the drain in many places; the rest is collected (common practice). */
-export function wasteSentence(at: Situation, waste: Vessel['liquid']): string {
-  if (waste.volume_nL === 0) return 'The waste bottle is empty.';
-  const pH = shown(solve(waste, at.spec.model).pH, 2);
-  const advice =
-    pH >= 6 && pH <= 9
-      ? 'Between pH 6 and 9 many places let it run to the drain with much water'
-      : `Bring it to between pH 6 and 9 with dilute ${pH < 6 ? 'alkali' : 'acid'} before it goes anywhere`;
-  return `The waste holds ${mL(waste.volume_nL)} at pH ${pH.toFixed(2)}. ${advice}. ${LOCAL_RULES}`;
-}
-
 const wasteNotice = (at: Situation, scene: Scene): Notice[] => [
-  { kind: 'said', sentence: wasteSentence(at, scene.waste) },
+  { kind: 'said', sentence: wasteSentence(scene.waste, at.spec.model) },
 ];
 
 /** One rinse: a tenth of the glass, 5 mL at the most. */

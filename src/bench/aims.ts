@@ -2,7 +2,7 @@
 import { pairsOf } from './pairs.ts';
 import { lastStanding } from './apply.ts';
 import { buretteReading, glassware, pathOf } from './glassware.ts';
-import { colourOf, solve } from './liquid.ts';
+import { colourOf, pHOf } from './liquid.ts';
 import { meterTrue } from './meter.ts';
 import { volumeOf } from './moves/hands.ts';
 import { mLShown, pHShown, shown } from './precision.ts';
@@ -26,9 +26,9 @@ function settled(state: BenchState, id: string): Vessel | null {
   return vessel && vessel.liquid.volume_nL > 0 && !vessel.layer ? vessel : null;
 }
 
-const pHOf = (state: BenchState, id: string): number | null => {
+const pHIn = (state: BenchState, id: string): number | null => {
   const vessel = settled(state, id);
-  return vessel && pHShown(solve(vessel.liquid, state.spec.model).pH);
+  return vessel && pHShown(pHOf(vessel.liquid, state.spec.model));
 };
 
 function colourIn(state: BenchState, id: string) {
@@ -66,7 +66,7 @@ function ratioIn(state: BenchState, id: string, family: string): number | null {
   return nearest === null ? null : shown(nearest, 2);
 }
 
-const quantity = { pH: pHOf, volume: volumeIn, temperature: temperatureIn } as const;
+const quantity = { pH: pHIn, volume: volumeIn, temperature: temperatureIn } as const;
 /** Decimals at which two readings are compared. */
 const decimals = { pH: 2, volume: 2, temperature: 1 } as const;
 
@@ -88,7 +88,7 @@ const touches = (move: Move, vessel: string): boolean =>
 function holds(state: BenchState, aim: AimSpec, met: ReadonlySet<string>): boolean {
   switch (aim.kind) {
     case 'pH': {
-      const pH = pHOf(state, aim.vessel);
+      const pH = pHIn(state, aim.vessel);
       return pH !== null && within(pH, aim.min, aim.max);
     }
     case 'colour': {
@@ -132,7 +132,7 @@ function holds(state: BenchState, aim: AimSpec, met: ReadonlySet<string>): boole
     case 'waste-pH': {
       const { waste } = state.scene;
       if (waste.volume_nL === 0 || mLShown(waste.volume_nL) < (aim.min_mL ?? 0)) return false;
-      return within(pHShown(solve(waste, state.spec.model).pH), aim.min, aim.max);
+      return within(pHShown(pHOf(waste, state.spec.model)), aim.min, aim.max);
     }
     case 'did': {
       const done = standing(state).filter(
@@ -153,7 +153,7 @@ export function sideOfAim(state: BenchState, aim: AimSpec): -1 | 0 | 1 {
     value === null ? 0 : min !== undefined && value < min ? -1 : max !== undefined && value > max ? 1 : 0;
   switch (aim.kind) {
     case 'pH':
-      return side(pHOf(state, aim.vessel), aim.min, aim.max);
+      return side(pHIn(state, aim.vessel), aim.min, aim.max);
     case 'ratio':
       return side(ratioIn(state, aim.vessel, aim.family), aim.min, aim.max);
     case 'volume':

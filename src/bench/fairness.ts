@@ -1,7 +1,7 @@
 /** Whether two vessels make a fair comparison: what differs between them besides what is being tested. */
 import { readVolume } from './read.ts';
 import { glassware, type Glass } from './glassware.ts';
-import { solve } from './liquid.ts';
+import { pHOf } from './liquid.ts';
 import { pairsOf } from './pairs.ts';
 import { volumeOf, whole } from './moves/hands.ts';
 import { pHShown, shown } from './precision.ts';
@@ -129,7 +129,7 @@ function substances(a: Side, b: Side, dyes: ReadonlySet<string>): Difference[] {
 
 function starts(state: BenchState, a: Side, b: Side): Difference[] {
   if (volumeOf(a.vessel) === 0 || volumeOf(b.vessel) === 0) return [];
-  const [x, y] = [a, b].map((s) => pHShown(solve(whole(s.vessel), state.spec.model).pH)) as [number, number];
+  const [x, y] = [a, b].map((s) => pHShown(pHOf(whole(s.vessel), state.spec.model))) as [number, number];
   return shown(Math.abs(x - y), 2) < PH_ALIKE
     ? []
     : [

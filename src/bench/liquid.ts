@@ -5,14 +5,12 @@ import {
   indicatorStock,
   mix,
   solve as computeSolve,
-  take,
+  take as takeFrom,
   water,
 } from '../chemistry/index.ts';
 import type { Colour, Equilibrium, Model, Solution } from '../chemistry/types.ts';
 import { uniform } from './seed.ts';
 import type { Contents, Drawn, ShelfItem } from './types.ts';
-
-export { mix, take };
 
 const NL = 1e6;
 
@@ -27,6 +25,21 @@ const solved: Record<Model, WeakMap<Solution, Equilibrium>> = {
   textbook: new WeakMap(),
   real: new WeakMap(),
 };
+
+/** Parts of one liquid are alike in everything but volume: what was computed for the whole holds for them. */
+const partOf = new WeakMap<Solution, Solution>();
+
+/** Takes a volume out of a liquid, in whole nanolitres. */
+export function take(liquid: Solution, volume_nL: number): { taken: Solution; left: Solution } {
+  const parts = takeFrom(liquid, volume_nL);
+  const like = partOf.get(liquid) ?? liquid;
+  if (parts.taken.volume_nL > 0) partOf.set(parts.taken, like);
+  if (parts.left.volume_nL > 0) partOf.set(parts.left, like);
+  return parts;
+}
+
+/** pH of a liquid; of a part, that of the liquid which it was taken from. */
+export const pHOf = (liquid: Solution, model: Model): number => solve(partOf.get(liquid) ?? liquid, model).pH;
 
 /** The equilibrium of a liquid, computed once for each liquid and model. */
 export function solve(liquid: Solution, model: Model): Equilibrium {
@@ -133,7 +146,7 @@ export function sealed(liquid: Solution, model: Model): Solution {
 
 /** All carbonate in a liquid, in every form, mol. */
 export const carbonateOf = (liquid: Solution, model: Model): number =>
-  liquid.gas
+  liquid.gas && liquid.volume_nL > 0
     ? solve(liquid, model).species.reduce(
         (sum, s) => (s.component === 'carbonic' ? sum + s.amount_mol : sum),
         0,

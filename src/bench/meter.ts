@@ -1,5 +1,5 @@
 /** The hand-held pH meter: what its electrode gives, what its display shows, and when that is to be doubted. */
-import { join, solve, take } from './liquid.ts';
+import { join, pHOf, take } from './liquid.ts';
 import { pHShown, shown } from './precision.ts';
 import { triangular, uniform } from './seed.ts';
 import type { BenchSpec, Probe, Scene } from './types.ts';
@@ -35,9 +35,9 @@ function atTip(at: At): number | null {
   const { probe } = at.scene;
   const vessel = probe.at === null ? undefined : at.scene.vessels[probe.at];
   if (!vessel || vessel.liquid.volume_nL === 0) return null;
-  if (!probe.carried) return solve(vessel.liquid, at.spec.model).pH;
+  if (!probe.carried) return pHOf(vessel.liquid, at.spec.model);
   const around = take(vessel.liquid, Math.min(AROUND_TIP_NL, vessel.liquid.volume_nL)).taken;
-  return solve(join(probe.carried, around), at.spec.model).pH;
+  return pHOf(join(probe.carried, around), at.spec.model);
 }
 
 /** What the uncalibrated electrode gives, two decimals. */

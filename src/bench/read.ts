@@ -3,7 +3,7 @@ import type { Solution } from '../chemistry/types.ts';
 import { sampleIn } from './create.ts';
 import { buretteReading, glassware, levelOf, pathOf, type Glass } from './glassware.ts';
 import { anyHidden, hiddenOf, isHidden } from './hiding.ts';
-import { bottleOf, colourOf, drawn, solve } from './liquid.ts';
+import { bottleOf, colourOf, drawn, pHOf } from './liquid.ts';
 import { displayed, meterCalibrated } from './meter.ts';
 import { FILM_NL, volumeOf } from './moves/hands.ts';
 import { wasteSentence } from './waste.ts';
@@ -52,7 +52,7 @@ export const hasProbe = (state: BenchState, spec: VesselSpec): boolean =>
 export function probeReading(state: BenchState, spec: VesselSpec): number | null {
   const vessel = state.scene.vessels[spec.id];
   if (!vessel || vessel.liquid.volume_nL === 0) return null;
-  if (spec.probe) return pHShown(solve(vessel.liquid, state.spec.model).pH);
+  if (spec.probe) return pHShown(pHOf(vessel.liquid, state.spec.model));
   return state.scene.probe.at === spec.id ? displayed(state) : null;
 }
 
@@ -165,7 +165,7 @@ export function read(state: BenchState, seen: Seen = {}): Readings {
     waste: {
       empty: waste.volume_nL === 0,
       ...(volumeOpen && { volume_mL: mLShown(waste.volume_nL) }),
-      ...(pHOpen && waste.volume_nL > 0 && { pH: pHShown(solve(waste, spec.model).pH) }),
+      ...(pHOpen && waste.volume_nL > 0 && { pH: pHShown(pHOf(waste, spec.model)) }),
       sentence: wasteSentence(waste, spec.model, { volume: volumeOpen, pH: pHOpen }),
     },
     spills: scene.spills.map((s) => ({

@@ -1,6 +1,6 @@
 /** The waste bottle: what is in it, and what usually becomes of it. */
 import type { Model, Solution } from '../chemistry/types.ts';
-import { solve } from './liquid.ts';
+import { pHOf } from './liquid.ts';
 import { LOCAL_RULES } from './moves/hands.ts';
 import { mL, shown } from './precision.ts';
 
@@ -13,7 +13,7 @@ export function wasteSentence(waste: Solution, model: Model, open = { volume: tr
   if (waste.volume_nL === 0) return 'The waste bottle is empty.';
   const holds = `The waste holds ${open.volume ? mL(waste.volume_nL) : 'liquid'}`;
   if (!open.pH) return `${holds}. ${LOCAL_RULES}`;
-  const pH = shown(solve(waste, model).pH, 2);
+  const pH = shown(pHOf(waste, model), 2);
   const advice =
     pH >= 6 && pH <= 9
       ? 'Between pH 6 and 9 many places let it run to the drain with much water'

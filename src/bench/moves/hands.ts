@@ -1,6 +1,6 @@
 /** What every move does with its hands: find things, take liquid out, put liquid in, measure. */
 import { glassware, toleranceOf, type Glass } from '../glassware.ts';
-import { concentrationOf, join, sealed, solve, take } from '../liquid.ts';
+import { concentrationOf, join, sealed, pHOf, take } from '../liquid.ts';
 import { mL } from '../precision.ts';
 import { triangular, uniform } from '../seed.ts';
 import type { Notice, Refusal, Scene, ShelfItem, Vessel, VesselSpec } from '../types.ts';
@@ -96,9 +96,9 @@ export function takeOut(
 function staysApart(at: Situation, vessel: Vessel, glass: Glass, incoming: Solution): boolean {
   if (vessel.stirring || !glass.canSwirl || vessel.liquid.volume_nL <= FILM_NL) return false;
   if (incoming.volume_nL >= volumeOf(vessel)) return false;
-  const pH = solve(incoming, at.spec.model).pH;
+  const pH = pHOf(incoming, at.spec.model);
   if (pH > STRONG_ACID_PH && pH < STRONG_BASE_PH) return false;
-  return Math.abs(pH - solve(vessel.liquid, at.spec.model).pH) >= 1;
+  return Math.abs(pH - pHOf(vessel.liquid, at.spec.model)) >= 1;
 }
 
 /**
@@ -267,7 +267,7 @@ export const LOCAL_RULES = "Follow your local rules and your school's licensed p
 
 const corrosive = (at: Situation, liquid: Solution): 'acid' | 'base' | null => {
   if (liquid.volume_nL === 0) return null;
-  const pH = solve(liquid, at.spec.model).pH;
+  const pH = pHOf(liquid, at.spec.model);
   if (pH < 1 && concentrationOf(liquid, at.spec.model, 1) >= CORROSIVE_ACID_MOLL) return 'acid';
   if (pH > 13 && concentrationOf(liquid, at.spec.model, -1) >= CORROSIVE_BASE_MOLL) return 'base';
   return null;

@@ -3,7 +3,7 @@ import { judge } from '../aims.ts';
 import { apply } from '../apply.ts';
 import { glassware } from '../glassware.ts';
 import { offeredMoves } from '../moves/registry.ts';
-import { solve } from '../liquid.ts';
+import { pHOf } from '../liquid.ts';
 import { volumeOf } from '../moves/hands.ts';
 import type { AimSpec, BenchSpec, BenchState, Move, MoveKind } from '../types.ts';
 
@@ -99,7 +99,7 @@ export interface Gauge {
 
 const pHIn = (state: BenchState, id: string): number => {
   const vessel = state.scene.vessels[id];
-  return vessel && vessel.liquid.volume_nL > 0 ? solve(vessel.liquid, state.spec.model).pH : 7;
+  return vessel && vessel.liquid.volume_nL > 0 ? pHOf(vessel.liquid, state.spec.model) : 7;
 };
 
 /** The smallest number of drops of one source that meets the aim, among those tried; null where none does. */

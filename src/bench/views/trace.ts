@@ -2,7 +2,7 @@
 import { lastStanding } from '../apply.ts';
 import { glassware, pathOf } from '../glassware.ts';
 import { isHidden, traceHidden } from '../hiding.ts';
-import { colourOf, join, solve, take } from '../liquid.ts';
+import { colourOf, join, pHOf, take } from '../liquid.ts';
 import { volumeOf, whole } from '../moves/hands.ts';
 import { mLShown, pHShown, shown } from '../precision.ts';
 import { probeReading } from '../read.ts';
@@ -85,7 +85,7 @@ function between(before: BenchState, after: BenchState, spec: VesselSpec): (read
   return Array.from({ length: STEPS - 1 }, (_, i) => {
     const part = Math.round((poured * (i + 1)) / STEPS);
     const liquid = join(whole(start), take(source, part).taken);
-    return [shown((base + part) / 1e6, 4), pHShown(solve(liquid, after.spec.model).pH)] as const;
+    return [shown((base + part) / 1e6, 4), pHShown(pHOf(liquid, after.spec.model))] as const;
   });
 }
 

@@ -48,7 +48,7 @@ export function describe(readings: Readings): string[] {
   );
   return [
     ...vessels.map(vesselSentence),
-    ...(level ? [`They stand equally high, ${filled[0]?.volume_mL?.toFixed(2) ?? ''} mL each.`] : []),
+    ...(level ? [`They hold equal volumes, ${filled[0]?.volume_mL?.toFixed(2) ?? ''} mL each.`] : []),
     ...(shelf.length > 0 ? [`On the shelf: ${list(shelf)}.`] : []),
     ...(readings.meter
       ? [

@@ -35,3 +35,4 @@ export { describe } from './describe.ts';
 export { fairness, type Difference, type FairnessNote } from './fairness.ts';
 export { changedSpec, whatIf, type Change, type WhatIf } from './what-if.ts';
 export { rehearse, type AimRehearsal, type Rehearsal } from './rehearsal/rehearse.ts';
+export { roomLeft, type RoomLeft } from './views/room-left.ts';

@@ -71,8 +71,28 @@ function pointOf(state: BenchState, spec: VesselSpec, seen: Seen): TracePoint | 
   };
 }
 
+/** Computed once for each state and vessel: a trace is asked for again after every move. */
+const ways = new WeakMap<BenchState, Map<string, readonly (readonly [number, number])[]>>();
+
+function between(
+  before: BenchState,
+  after: BenchState,
+  spec: VesselSpec,
+): readonly (readonly [number, number])[] {
+  const known = ways.get(after) ?? new Map<string, readonly (readonly [number, number])[]>();
+  ways.set(after, known);
+  const key = `${spec.id}/${before.count}`;
+  const way = known.get(key) ?? computeBetween(before, after, spec);
+  known.set(key, way);
+  return way;
+}
+
 /** The way between two states, where one bottle ran into the vessel and nothing else happened to it. */
-function between(before: BenchState, after: BenchState, spec: VesselSpec): (readonly [number, number])[] {
+function computeBetween(
+  before: BenchState,
+  after: BenchState,
+  spec: VesselSpec,
+): readonly (readonly [number, number])[] {
   const { move } = after;
   if (!move || !('from' in move) || after.spec.careful) return [];
   const source = before.scene.bottles[move.from];

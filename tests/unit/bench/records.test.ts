@@ -8,6 +8,7 @@ import {
   pairBar,
   read,
   rehearse,
+  roomLeft,
   statesOf,
   trace,
   traceSentence,
@@ -16,7 +17,7 @@ import {
   type FairnessTopic,
   type VesselSpec,
 } from '../../../src/bench/index.ts';
-import { buffer, fullBench, water, waterOrBuffer, withAims } from './benches.ts';
+import { acid as acidBottle, buffer, fullBench, water, waterOrBuffer, withAims } from './benches.ts';
 import { benchOf } from './driver.ts';
 
 describe('the notebook', () => {
@@ -129,8 +130,44 @@ describe('views', () => {
     expect(told).toMatch(
       /Ethanoate buffer, a 100 mL beaker, holds 50\.50 mL, .*shows pH 4\.76 and is being stirred\./,
     );
-    expect(told).toContain('They stand equally high, 50.50 mL each.');
+    expect(told).toContain('They hold equal volumes, 50.50 mL each.');
     expect(told).toContain('On the shelf: Hydrochloric acid 0.10 mol/L');
+  });
+});
+
+describe('room left', () => {
+  test('R42 what a buffer takes is what the bench then shows', () => {
+    const room = roomLeft(benchOf(waterOrBuffer).state, 'buffer', 'acid');
+    expect(room?.endedBy).toBe('ratio');
+    // 0.25 mmol of each, ratio 1 : 10 once 0.25 - 0.5 / 11 = 0.205 mmol of ethanoate are turned: 2.05 mL (and 0.04 for free H+)
+    expect(room?.mL).toBeGreaterThan(2.04);
+    expect(room?.mL).toBeLessThan(2.2);
+    const bench = benchOf(waterOrBuffer).do({
+      kind: 'pour',
+      from: 'acid',
+      into: 'buffer',
+      volume_uL: Math.round((room?.mL ?? 0) * 1000),
+    });
+    expect(bench.vessel('buffer').pH).toBe(room?.pH);
+    expect(room?.pH).toBeCloseTo(3.76, 1);
+    expect(roomLeft(bench.state, 'water', 'acid')).toBeNull();
+  });
+
+  test('R42 it never exceeds the space in the vessel or the stock, and says which ends it', () => {
+    const strong = whatIf(benchOf(waterOrBuffer).state, {
+      kind: 'strength',
+      of: 'buffer',
+      factor: 100,
+    }).state;
+    expect(roomLeft(strong, 'buffer', 'acid')).toMatchObject({ endedBy: 'space', mL: 49.5 });
+    expect(roomLeft(strong, 'buffer', 'acid')?.sentence).toMatch(
+      /then the glass is full; its buffer would take more\.$/,
+    );
+    const little = {
+      ...waterOrBuffer,
+      shelf: [{ ...acidBottle, contents: { ...acidBottle.contents, volume_mL: 1 } }],
+    };
+    expect(roomLeft(benchOf(little).state, 'buffer', 'acid')).toMatchObject({ endedBy: 'stock', mL: 1 });
   });
 });
 

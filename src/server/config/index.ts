@@ -18,6 +18,8 @@ const schema = z
     DATABASE_POOL: z.coerce.number().int().min(1).max(100).default(10),
     SMTP_URL: z.string().url().default('smtp://127.0.0.1:1025'),
     MAIL_FROM: z.string().default('Dropwise <post@dropwise.invalid>'),
+    /** Signs what a browser keeps. At least 32 characters; `openssl rand -base64 32` makes one. */
+    COOKIE_SECRET: z.string().min(32, 'needs at least 32 random characters'),
     LOG_LEVEL: z.enum(['debug', 'info', 'warn', 'error', 'silent']).default('info'),
     /** argon2id: memory in KiB and passes. The defaults are OWASP ASVS 5.0 appendix C's second choice. */
     ARGON2_MEMORY_KIB: z.coerce.number().int().min(256).default(19456),

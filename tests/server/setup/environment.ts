@@ -21,4 +21,7 @@ Object.assign(process.env, {
   DATABASE_PASSWORD: password,
   DATABASE_NAME: name,
   SMTP_URL: 'smtp://127.0.0.1:1',
+  COOKIE_SECRET: 'only for tests, only for tests, only for tests',
+  ARGON2_MEMORY_KIB: '256',
+  ARGON2_PASSES: '1',
 });

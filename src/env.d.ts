@@ -1,0 +1,14 @@
+/// <reference types="astro/client" />
+
+declare namespace App {
+  interface Locals {
+    /** Who is signed in on this browser. */
+    person: import('./server/sign-in/sessions').SignedIn | null;
+    /** The public id of the session of this request. */
+    sessionId: string | null;
+    standing: import('./server/access/memberships').Standing | null;
+    requestId: string;
+    /** The client's address, as the front determined it. */
+    clientAddress: string;
+  }
+}

@@ -1,0 +1,44 @@
+import { defineMiddleware } from 'astro:middleware';
+import { hasRole, standingOf } from './server/access/memberships.ts';
+import { ruleFor } from './server/access/rules.ts';
+import { log } from './server/log.ts';
+import { problemResponse } from './server/problem.ts';
+import { COOKIE, readSession } from './server/sign-in/sessions.ts';
+
+/**
+ * Who is asking, and may they? Decided by the route's pattern, which Astro keeps canonical, and closed unless a rule
+ * opens it. Signed-in answers are never stored by anyone.
+ */
+export const onRequest = defineMiddleware(async (context, next) => {
+  const { locals, cookies, routePattern, url } = context;
+  locals.requestId ??= 'none';
+  locals.clientAddress = context.clientAddress;
+  const { person, sessionId, cookie } = await readSession(cookies.get(COOKIE)?.value);
+  if (cookie) cookies.set(cookie.name, cookie.value, cookie.attributes);
+  locals.person = person;
+  locals.sessionId = sessionId;
+  locals.standing = person ? await standingOf(person.id) : null;
+
+  const rule = ruleFor(routePattern);
+  const isApi = routePattern.startsWith('/api/');
+  const deny = (status: 401 | 403 | 404): Response | Promise<Response> => {
+    log.warn({ requestId: locals.requestId, routePattern, person: person?.publicId ?? null, status }, 'access denied');
+    if (isApi) {
+      const title = { 401: 'Sign in first.', 403: 'Your account may not do this.', 404: 'There is nothing at this address.' }[status];
+      const code = { 401: 'sign-in-first', 403: 'not-allowed', 404: 'not-found' }[status];
+      return problemResponse({ status, code, title }, locals.requestId);
+    }
+    if (status === 401) return context.redirect(`/sign-in?next=${encodeURIComponent(url.pathname + url.search)}`, 303);
+    return new Response(null, { status: 404 });
+  };
+
+  if (rule === undefined) return deny(404);
+  if (rule === 'signed-out' && person) return context.redirect('/lessons', 303);
+  if (rule !== 'public' && rule !== 'signed-out') {
+    if (!person) return deny(401);
+    if (typeof rule === 'object' && !(locals.standing && hasRole(locals.standing, rule.role))) return deny(403);
+  }
+  const response = await next();
+  if (person) response.headers.set('Cache-Control', 'no-store');
+  return response;
+});

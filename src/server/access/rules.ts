@@ -1,0 +1,28 @@
+import type { Role } from '../database/index.ts';
+
+/**
+ * Who may reach which route, by the pattern under which Astro routes it. A route that is not listed here is closed to
+ * everyone; a test walks src/pages and fails for one without a rule. Rows (whose run, which school) are checked where
+ * they are read.
+ */
+export type Rule = 'public' | 'signed-out' | 'signed-in' | { readonly role: readonly Role[] };
+
+export const rules: Readonly<Record<string, Rule>> = {
+  '/': 'public',
+  '/404': 'public',
+  '/500': 'public',
+  '/_actions/[...path]': 'public',
+  '/account': 'signed-in',
+  '/account/export': 'signed-in',
+  '/forgot': 'public',
+  '/reset': 'public',
+  '/sign-in': 'public',
+  '/sign-out': 'public',
+  '/sign-up': 'public',
+  '/verify': 'public',
+  '/verify-change': 'public',
+};
+
+export function ruleFor(routePattern: string): Rule | undefined {
+  return Object.hasOwn(rules, routePattern) ? rules[routePattern] : undefined;
+}

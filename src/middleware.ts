@@ -22,13 +22,21 @@ export const onRequest = defineMiddleware(async (context, next) => {
   const rule = ruleFor(routePattern);
   const isApi = routePattern.startsWith('/api/');
   const deny = (status: 401 | 403 | 404): Response | Promise<Response> => {
-    log.warn({ requestId: locals.requestId, routePattern, person: person?.publicId ?? null, status }, 'access denied');
+    log.warn(
+      { requestId: locals.requestId, routePattern, person: person?.publicId ?? null, status },
+      'access denied',
+    );
     if (isApi) {
-      const title = { 401: 'Sign in first.', 403: 'Your account may not do this.', 404: 'There is nothing at this address.' }[status];
+      const title = {
+        401: 'Sign in first.',
+        403: 'Your account may not do this.',
+        404: 'There is nothing at this address.',
+      }[status];
       const code = { 401: 'sign-in-first', 403: 'not-allowed', 404: 'not-found' }[status];
       return problemResponse({ status, code, title }, locals.requestId);
     }
-    if (status === 401) return context.redirect(`/sign-in?next=${encodeURIComponent(url.pathname + url.search)}`, 303);
+    if (status === 401)
+      return context.redirect(`/sign-in?next=${encodeURIComponent(url.pathname + url.search)}`, 303);
     return new Response(null, { status: 404 });
   };
 
@@ -36,7 +44,8 @@ export const onRequest = defineMiddleware(async (context, next) => {
   if (rule === 'signed-out' && person) return context.redirect('/lessons', 303);
   if (rule !== 'public' && rule !== 'signed-out') {
     if (!person) return deny(401);
-    if (typeof rule === 'object' && !(locals.standing && hasRole(locals.standing, rule.role))) return deny(403);
+    if (typeof rule === 'object' && !(locals.standing && hasRole(locals.standing, rule.role)))
+      return deny(403);
   }
   const response = await next();
   if (person) response.headers.set('Cache-Control', 'no-store');

@@ -9,7 +9,11 @@ export interface Standing {
 export async function standingOf(personId: number): Promise<Standing> {
   const now = new Date();
   const rows = await Membership.findAll({
-    where: { personId, startsAt: { [Op.lte]: now }, [Op.or]: [{ endsAt: null }, { endsAt: { [Op.gt]: now } }] },
+    where: {
+      personId,
+      startsAt: { [Op.lte]: now },
+      [Op.or]: [{ endsAt: null }, { endsAt: { [Op.gt]: now } }],
+    },
   });
   return { memberships: rows.map(({ role, schoolId }) => ({ role, schoolId })) };
 }
@@ -21,8 +25,12 @@ export const hasRole = (standing: Standing, roles: readonly Role[]): boolean =>
  * May this person open this lesson? The one place that answers it: open lessons for everyone; the others for anyone with
  * any membership that counts now, whatever it came from; a school's own lessons for that school's people.
  */
-export function mayOpenLesson(standing: Standing | null, lesson: { access: 'open' | 'members'; schoolId: number | null }): boolean {
-  if (lesson.schoolId !== null) return standing?.memberships.some((m) => m.schoolId === lesson.schoolId) ?? false;
+export function mayOpenLesson(
+  standing: Standing | null,
+  lesson: { access: 'open' | 'members'; schoolId: number | null },
+): boolean {
+  if (lesson.schoolId !== null)
+    return standing?.memberships.some((m) => m.schoolId === lesson.schoolId) ?? false;
   if (lesson.access === 'open') return true;
   return (standing?.memberships.length ?? 0) > 0;
 }

@@ -15,7 +15,12 @@ interface Row {
   tries: number;
 }
 
-const transport = createTransport({ url: config.SMTP_URL, connectionTimeout: 5000, greetingTimeout: 5000, socketTimeout: 15_000 });
+const transport = createTransport({
+  url: config.SMTP_URL,
+  connectionTimeout: 5000,
+  greetingTimeout: 5000,
+  socketTimeout: 15_000,
+});
 
 /**
  * Sends what is due, one mail a transaction. The row is locked while its mail goes out, so no second process takes it;
@@ -36,7 +41,8 @@ async function sendOne(): Promise<boolean> {
       { type: QueryTypes.SELECT, transaction },
     );
     if (!row) return false;
-    const content = typeof row.content === 'string' ? (JSON.parse(row.content) as Record<string, string>) : row.content;
+    const content =
+      typeof row.content === 'string' ? (JSON.parse(row.content) as Record<string, string>) : row.content;
     try {
       const mail = render(row.template, content);
       await transport.sendMail({
@@ -46,11 +52,14 @@ async function sendOne(): Promise<boolean> {
         ...mail,
       });
       // The link in it is a secret; once sent it is not kept.
-      await sequelize.query("UPDATE outbox SET state = 'sent', sent_at = NOW(3), content = '{}', last_error = NULL WHERE id = ?", {
-        replacements: [row.id],
-        type: QueryTypes.UPDATE,
-        transaction,
-      });
+      await sequelize.query(
+        "UPDATE outbox SET state = 'sent', sent_at = NOW(3), content = '{}', last_error = NULL WHERE id = ?",
+        {
+          replacements: [row.id],
+          type: QueryTypes.UPDATE,
+          transaction,
+        },
+      );
     } catch (error) {
       const tries = row.tries + 1;
       const wait_s = Math.min(3600, 5 * 2 ** row.tries);

@@ -33,7 +33,10 @@ const templates = {
   }),
   'change-email': (c: Content): Mail => ({
     subject: 'Confirm your new e-mail address',
-    lines: [`Hello ${c.name},`, 'Confirm that you want to sign in with this address from now on. The link works once, for 24 hours.'],
+    lines: [
+      `Hello ${c.name},`,
+      'Confirm that you want to sign in with this address from now on. The link works once, for 24 hours.',
+    ],
     link: { label: 'Use this address', url: c.url! },
   }),
   'email-changed': (c: Content): Mail => ({
@@ -56,12 +59,18 @@ const templates = {
 export type Template = keyof typeof templates;
 
 const escape = (text: string) =>
-  text.replace(/[&<>"']/g, (c) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' })[c]!);
+  text.replace(
+    /[&<>"']/g,
+    (c) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' })[c]!,
+  );
 
 /** Line breaks would start new headers; a subject has none. */
 const oneLine = (text: string) => text.replace(/[\r\n\u2028\u2029]+/g, ' ').trim();
 
-export function render(template: Template, content: Content): { subject: string; text: string; html: string } {
+export function render(
+  template: Template,
+  content: Content,
+): { subject: string; text: string; html: string } {
   const clean = Object.fromEntries(Object.entries(content).map(([key, value]) => [key, oneLine(value)]));
   const { subject, lines, link }: Mail = templates[template](clean);
   const footer = 'Dropwise. You get this mail because of something done with your account.';

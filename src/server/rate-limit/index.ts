@@ -32,13 +32,21 @@ export async function peek(key: string): Promise<Count> {
     'SELECT points, expire FROM rate_limits WHERE `key` = ? AND expire > ?',
     { replacements: [stored(key), now], type: QueryTypes.SELECT },
   );
-  return row ? { points: row.points, seconds: Math.ceil((Number(row.expire) - now) / 1000) } : { points: 0, seconds: 0 };
+  return row
+    ? { points: row.points, seconds: Math.ceil((Number(row.expire) - now) / 1000) }
+    : { points: 0, seconds: 0 };
 }
 
 export async function forget(key: string): Promise<void> {
-  await sequelize.query('DELETE FROM rate_limits WHERE `key` = ?', { replacements: [stored(key)], type: QueryTypes.DELETE });
+  await sequelize.query('DELETE FROM rate_limits WHERE `key` = ?', {
+    replacements: [stored(key)],
+    type: QueryTypes.DELETE,
+  });
 }
 
 export async function deleteExpiredCounts(): Promise<void> {
-  await sequelize.query('DELETE FROM rate_limits WHERE expire <= ?', { replacements: [Date.now()], type: QueryTypes.DELETE });
+  await sequelize.query('DELETE FROM rate_limits WHERE expire <= ?', {
+    replacements: [Date.now()],
+    type: QueryTypes.DELETE,
+  });
 }

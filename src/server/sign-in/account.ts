@@ -8,7 +8,8 @@ import { checkPassword, hashPassword, passwordFault } from './password.ts';
 import { issueToken, redeemToken } from './tokens.ts';
 
 /** What a person does with their account. Links are made from PUBLIC_URL alone, never from a request. */
-const link = (path: string, secret?: string) => new URL(secret ? `${path}?token=${secret}` : path, config.PUBLIC_URL).href;
+const link = (path: string, secret?: string) =>
+  new URL(secret ? `${path}?token=${secret}` : path, config.PUBLIC_URL).href;
 
 /** Addresses are compared as written but for case. */
 export const tidyEmail = (email: string): string => email.trim().normalize('NFC');
@@ -21,7 +22,11 @@ const byEmail = (email: string, transaction?: Transaction) =>
  * that confirms it or with word that it has an account already.
  * @returns the new person's id where one was made.
  */
-export async function signUp(input: { email: string; password: string; displayName: string }): Promise<number | null> {
+export async function signUp(input: {
+  email: string;
+  password: string;
+  displayName: string;
+}): Promise<number | null> {
   const email = tidyEmail(input.email);
   const passwordHash = await hashPassword(input.password);
   const again = async (): Promise<null> => {
@@ -87,7 +92,10 @@ export async function verifyEmail(secret: string): Promise<number | null> {
       { where: { id: token.personId, email: token.email }, transaction },
     );
     if (changed === 0) return null;
-    await audit({ action: 'confirmed e-mail', actorId: token.personId, subjectId: token.personId }, transaction);
+    await audit(
+      { action: 'confirmed e-mail', actorId: token.personId, subjectId: token.personId },
+      transaction,
+    );
     return token.personId;
   });
 }
@@ -120,11 +128,17 @@ export async function requestReset(email: string): Promise<void> {
 
 type Result = { ok: true } | { ok: false; field: string; message: string };
 
-async function setPassword(person: Person, password: string, keepSession: string | null, transaction: Transaction): Promise<void> {
+async function setPassword(
+  person: Person,
+  password: string,
+  keepSession: string | null,
+  transaction: Transaction,
+): Promise<void> {
   const now = new Date();
   await person.update({ passwordHash: await hashPassword(password) }, { transaction });
   const sessions = await Session.findAll({ where: { personId: person.id }, transaction });
-  for (const session of sessions) if (session.publicId !== keepSession) await session.destroy({ transaction });
+  for (const session of sessions)
+    if (session.publicId !== keepSession) await session.destroy({ transaction });
   await audit({ action: 'changed password', actorId: person.id, subjectId: person.id }, transaction);
   if (person.email)
     await enqueue(
@@ -145,15 +159,26 @@ export async function resetPassword(secret: string, password: string): Promise<R
     const fault = passwordFault(password);
     if (fault) return { ok: false, field: 'password', message: fault };
     const token = await redeemToken('reset', secret, transaction);
-    const person = token && (await Person.findOne({ where: { id: token.personId, email: token.email }, transaction }));
-    if (!person) return { ok: false, field: 'token', message: 'This link was used already or is too old. Ask for a new one.' };
+    const person =
+      token && (await Person.findOne({ where: { id: token.personId, email: token.email }, transaction }));
+    if (!person)
+      return {
+        ok: false,
+        field: 'token',
+        message: 'This link was used already or is too old. Ask for a new one.',
+      };
     await setPassword(person, password, null, transaction);
     if (!person.emailVerifiedAt) await person.update({ emailVerifiedAt: new Date() }, { transaction });
     return { ok: true };
   });
 }
 
-export async function changePassword(personId: number, current: string, next: string, keepSession: string | null): Promise<Result> {
+export async function changePassword(
+  personId: number,
+  current: string,
+  next: string,
+  keepSession: string | null,
+): Promise<Result> {
   const person = await Person.findByPk(personId, { rejectOnEmpty: true });
   if (!(await checkPassword(person.passwordHash, current)))
     return { ok: false, field: 'current', message: 'That is not your current password.' };

@@ -40,7 +40,12 @@ export const adapter: Adapter = {
       id,
       userId: row.personId,
       expiresAt,
-      attributes: { publicId: row.publicId, createdAt: row.createdAt, endsAt: row.endsAt, device: row.device },
+      attributes: {
+        publicId: row.publicId,
+        createdAt: row.createdAt,
+        endsAt: row.endsAt,
+        device: row.device,
+      },
     };
     const user: DatabaseUser = {
       id: row.personId,
@@ -56,12 +61,20 @@ export const adapter: Adapter = {
     return [session, user];
   },
   async getUserSessions(personId) {
-    const rows = await Session.findAll({ where: { personId, expiresAt: { [Op.gt]: new Date() } }, order: [['createdAt', 'DESC']] });
+    const rows = await Session.findAll({
+      where: { personId, expiresAt: { [Op.gt]: new Date() } },
+      order: [['createdAt', 'DESC']],
+    });
     return rows.map((row) => ({
       id: row.idHash,
       userId: personId,
       expiresAt: row.expiresAt,
-      attributes: { publicId: row.publicId, createdAt: row.createdAt, endsAt: row.endsAt, device: row.device },
+      attributes: {
+        publicId: row.publicId,
+        createdAt: row.createdAt,
+        endsAt: row.endsAt,
+        device: row.device,
+      },
     }));
   },
   async setSession(session) {
@@ -87,6 +100,8 @@ export const adapter: Adapter = {
   },
   async deleteExpiredSessions() {
     const now = new Date();
-    await Session.destroy({ where: { [Op.or]: [{ expiresAt: { [Op.lte]: now } }, { endsAt: { [Op.lte]: now } }] } });
+    await Session.destroy({
+      where: { [Op.or]: [{ expiresAt: { [Op.lte]: now } }, { endsAt: { [Op.lte]: now } }] },
+    });
   },
 };

@@ -12,9 +12,13 @@ const YEAR_S = 365 * 86_400;
 const MOST = 5;
 
 const sign = (account: string) =>
-  createHmac('sha256', config.COOKIE_SECRET).update(`known:${account.toLowerCase()}`).digest('base64url').slice(0, 32);
+  createHmac('sha256', config.COOKIE_SECRET)
+    .update(`known:${account.toLowerCase()}`)
+    .digest('base64url')
+    .slice(0, 32);
 
-const notes = (cookies: AstroCookies): string[] => (cookies.get(NAME)?.value ?? '').split('.').filter(Boolean).slice(0, MOST);
+const notes = (cookies: AstroCookies): string[] =>
+  (cookies.get(NAME)?.value ?? '').split('.').filter(Boolean).slice(0, MOST);
 
 export const isKnownDevice = (cookies: AstroCookies, account: string): boolean =>
   notes(cookies).some((note) => sameSecret(note, sign(account)));
@@ -22,5 +26,11 @@ export const isKnownDevice = (cookies: AstroCookies, account: string): boolean =
 export function rememberDevice(cookies: AstroCookies, account: string): void {
   const note = sign(account);
   const kept = [note, ...notes(cookies).filter((other) => other !== note)].slice(0, MOST);
-  cookies.set(NAME, kept.join('.'), { httpOnly: true, secure: config.https, sameSite: 'lax', path: '/', maxAge: YEAR_S });
+  cookies.set(NAME, kept.join('.'), {
+    httpOnly: true,
+    secure: config.https,
+    sameSite: 'lax',
+    path: '/',
+    maxAge: YEAR_S,
+  });
 }

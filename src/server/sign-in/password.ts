@@ -22,7 +22,8 @@ export function passwordFault(password: string, about: readonly (string | null)[
   if (length < SHORTEST) return `Use at least ${SHORTEST} characters; fifteen or more are better.`;
   if (length > LONGEST) return `Use at most ${LONGEST} characters.`;
   const folded = password.toLowerCase();
-  if (common.has(folded)) return 'This password is on the lists that attackers try first. Choose another one.';
+  if (common.has(folded))
+    return 'This password is on the lists that attackers try first. Choose another one.';
   if (new Set(folded).size < 4) return 'This password repeats itself too much. Choose another one.';
   for (const own of about) {
     const word = own?.toLowerCase().split('@')[0] ?? '';

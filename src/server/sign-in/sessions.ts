@@ -33,7 +33,11 @@ export const COOKIE = config.https ? '__Host-dropwise' : 'dropwise';
 
 const lucia = new Lucia(adapter, {
   sessionExpiresIn: new TimeSpan(config.SESSION_IDLE_DAYS, 'd'),
-  sessionCookie: { name: COOKIE, expires: true, attributes: { secure: config.https, sameSite: 'lax', path: '/' } },
+  sessionCookie: {
+    name: COOKIE,
+    expires: true,
+    attributes: { secure: config.https, sameSite: 'lax', path: '/' },
+  },
   getSessionAttributes: (attributes) => attributes,
   getUserAttributes: (attributes) => attributes,
 });
@@ -43,11 +47,21 @@ const DAY = 86_400_000;
 export interface CookieToSet {
   readonly name: string;
   readonly value: string;
-  readonly attributes: { httpOnly?: boolean; secure?: boolean; sameSite?: 'lax' | 'strict' | 'none'; path?: string; maxAge?: number };
+  readonly attributes: {
+    httpOnly?: boolean;
+    secure?: boolean;
+    sameSite?: 'lax' | 'strict' | 'none';
+    path?: string;
+    maxAge?: number;
+  };
 }
 
 /** Signs a person in on this browser; a session that it had before is ended, whoever's it was. */
-export async function createSession(personId: number, device: string, previous?: string): Promise<CookieToSet> {
+export async function createSession(
+  personId: number,
+  device: string,
+  previous?: string,
+): Promise<CookieToSet> {
   if (previous) await lucia.invalidateSession(previous);
   const now = new Date();
   const session = await lucia.createSession(personId, {
@@ -85,12 +99,21 @@ export async function listSessions(personId: number) {
     where: { personId, expiresAt: { [Op.gt]: now }, endsAt: { [Op.gt]: now } },
     order: [['createdAt', 'DESC']],
   });
-  return rows.map((row) => ({ id: row.publicId, device: row.device, since: row.createdAt, until: row.expiresAt }));
+  return rows.map((row) => ({
+    id: row.publicId,
+    device: row.device,
+    since: row.createdAt,
+    until: row.expiresAt,
+  }));
 }
 
 /** Ends one of a person's own sessions by its public id, or all but one. */
-export async function endSessions(personId: number, which: { only: string } | { except: string | null }): Promise<number> {
-  const publicId = 'only' in which ? which.only : which.except === null ? undefined : { [Op.ne]: which.except };
+export async function endSessions(
+  personId: number,
+  which: { only: string } | { except: string | null },
+): Promise<number> {
+  const publicId =
+    'only' in which ? which.only : which.except === null ? undefined : { [Op.ne]: which.except };
   return Session.destroy({ where: { personId, ...(publicId === undefined ? {} : { publicId }) } });
 }
 

@@ -27,7 +27,9 @@ export async function beforeTry(account: string, address: string, known: boolean
   // From here one try every few seconds: 2, 4, 8 ... 60. The owner waits a minute at the most.
   const pause = Math.min(60, 2 ** (failures.points - FREE_FAILURES + 1));
   const slot = await count(`pause:${account.toLowerCase()}`, 1, pause);
-  return slot.points === 1 ? { allowed: true, wait_ms } : { allowed: false, retryAfter_s: Math.max(1, slot.seconds) };
+  return slot.points === 1
+    ? { allowed: true, wait_ms }
+    : { allowed: false, retryAfter_s: Math.max(1, slot.seconds) };
 }
 
 export const afterFailure = (account: string) => count(accountKey(account), 1, ACCOUNT_WINDOW_S);
@@ -38,6 +40,11 @@ export async function afterSuccess(account: string): Promise<void> {
 }
 
 /** Limits on what sends mail or makes accounts, by address and by recipient. */
-export async function mayAsk(what: 'sign-up' | 'reset' | 'verify' | 'export', who: string, limit: number, window_s: number): Promise<boolean> {
+export async function mayAsk(
+  what: 'sign-up' | 'reset' | 'verify' | 'export',
+  who: string,
+  limit: number,
+  window_s: number,
+): Promise<boolean> {
   return (await count(`${what}:${who.toLowerCase()}`, 1, window_s)).points <= limit;
 }

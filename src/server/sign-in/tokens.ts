@@ -15,7 +15,14 @@ export async function issueToken(
   const now = new Date();
   await Token.destroy({ where: { personId, purpose }, transaction });
   await Token.create(
-    { hash: hashSecret(secret), purpose, personId, email, createdAt: now, expiresAt: new Date(now.getTime() + HOURS[purpose] * 3_600_000) },
+    {
+      hash: hashSecret(secret),
+      purpose,
+      personId,
+      email,
+      createdAt: now,
+      expiresAt: new Date(now.getTime() + HOURS[purpose] * 3_600_000),
+    },
     { transaction },
   );
   return secret;
@@ -23,7 +30,11 @@ export async function issueToken(
 
 /** Is this secret good? Does not use it up. */
 export async function tokenIsGood(purpose: TokenPurpose, secret: string): Promise<boolean> {
-  return (await Token.count({ where: { hash: hashSecret(secret), purpose, expiresAt: { [Op.gt]: new Date() } } })) === 1;
+  return (
+    (await Token.count({
+      where: { hash: hashSecret(secret), purpose, expiresAt: { [Op.gt]: new Date() } },
+    })) === 1
+  );
 }
 
 /** Uses a secret up; a second use, or two at once, get null. */

@@ -1,0 +1,3 @@
+import { people } from './people.ts';
+
+export const server = { people };

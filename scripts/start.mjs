@@ -1,18 +1,18 @@
 // `npm start`: from a clean checkout to the running product. Built-ins only until the packages are there.
-import { spawnSync } from 'node:child_process';
+import { execFile, spawnSync } from 'node:child_process';
 import { randomBytes } from 'node:crypto';
 import { existsSync } from 'node:fs';
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { createServer } from 'node:net';
 import { networkInterfaces } from 'node:os';
-import { join } from 'node:path';
+import { join, resolve } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { fileURLToPath } from 'node:url';
 import { freePort, startMariadb } from './mariadb.mjs';
 import { createProcesses } from './processes.mjs';
 
 const ROOT = fileURLToPath(new URL('..', import.meta.url)).replace(/\/$/, '');
-const DATA = join(ROOT, process.env.DATA_FOLDER ?? '.data');
+const DATA = resolve(ROOT, process.env.DATA_FOLDER ?? '.data');
 const PORT = Number(process.env.PORT ?? 4321);
 const READY_MS = 30_000;
 
@@ -95,6 +95,19 @@ async function waitUntilReady(instance, failed) {
   );
 }
 
+/**
+ * Migrates, publishes the shipped course and loads the demo world.
+ * @param {NodeJS.ProcessEnv} env
+ * @returns {Promise<string>} what it has to say, such as the demo's sign-ins
+ */
+const prepare = (env) =>
+  new Promise((done, fail) => {
+    execFile(process.execPath, ['dist/prepare.mjs'], { cwd: ROOT, env }, (error, stdout, stderr) => {
+      if (error) fail(new Expected(`The database could not be prepared:\n${stdout}${stderr}`));
+      else done(stdout.trim());
+    });
+  });
+
 const otherAddresses = () =>
   Object.values(networkInterfaces())
     .flatMap((list) => list ?? [])
@@ -160,10 +173,6 @@ async function start() {
     DEMO_SECRET: demo.secret,
     DROPWISE_INSTANCE: instance,
   };
-  const prepared = spawnSync(process.execPath, ['dist/prepare.mjs'], { cwd: ROOT, env, encoding: 'utf8' });
-  if (prepared.status !== 0)
-    throw new Expected(`The database could not be prepared:\n${prepared.stdout}${prepared.stderr}`);
-
   let failed = false;
   /** @param {string} name @param {string} program */
   const run = (name, program) =>
@@ -178,16 +187,19 @@ async function start() {
         void stop(1);
       },
     });
+  // The database is prepared while the web process starts: it is not ready before its schema is there.
+  const prepared = prepare(env);
   await run('fakes', 'scripts/fakes/main.mjs');
-  if (existsSync(join(ROOT, 'dist/jobs.mjs'))) await run('jobs', 'dist/jobs.mjs');
   await run('web', 'dist/front.mjs');
+  const words = await prepared;
+  if (existsSync(join(ROOT, 'dist/jobs.mjs'))) await run('jobs', 'dist/jobs.mjs');
   await waitUntilReady(instance, () => failed);
 
   say(`
 Dropwise   ${env.PUBLIC_URL}
 Mail       http://127.0.0.1:${demo.mailPagePort}`);
   if (!process.env.HOST) for (const address of otherAddresses()) say(`Network    ${address}`);
-  if (prepared.stdout.trim()) say(`\n${prepared.stdout.trim()}`);
+  if (words) say(`\n${words}`);
   say(`\nReady in ${((performance.now() - began) / 1000).toFixed(1)} s. Ctrl-C ends it.`);
 }
 

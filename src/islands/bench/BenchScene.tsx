@@ -1,5 +1,5 @@
 import { DndContext, KeyboardSensor, PointerSensor, useSensor, useSensors } from '@dnd-kit/core';
-import { memo, useMemo, useRef, useState, type ReactNode } from 'react';
+import { memo, useEffect, useMemo, useRef, useState, type ReactNode } from 'react';
 import { betweenVessels, overVessel } from './hand/targets';
 import type { Hands } from './hand/useHand';
 import { inHand, target } from './hand/machine';
@@ -64,12 +64,32 @@ export function BenchScene(props: Props) {
   const nameOf = (id: string) =>
     vessels.find((vessel) => vessel.id === id)?.name ?? shelf.find((item) => item.id === id)?.name ?? '';
 
+  const held = useRef<string | null>(null);
+  useEffect(() => {
+    // A bottle that keys had left tipped over a vessel takes the focus home with it.
+    const was = held.current;
+    held.current = hand.at === 'poised' ? hand.from : null;
+    const focused = document.activeElement;
+    if (
+      was !== null &&
+      hand.at === 'rest' &&
+      focused instanceof HTMLElement &&
+      focused.dataset['vessel'] !== undefined
+    ) {
+      focusOn(props.id, `[data-bottle="${CSS.escape(was)}"]`);
+    }
+  }, [hand, props.id]);
+
   return (
     <DndContext
       id={`bench-${props.id}`}
       sensors={sensors}
       collisionDetection={overVessel}
-      accessibility={{ announcements: SILENT, screenReaderInstructions: { draggable: HOW } }}
+      accessibility={{
+        announcements: SILENT,
+        restoreFocus: false,
+        screenReaderInstructions: { draggable: HOW },
+      }}
       onDragStart={(event) => {
         const by = event.activatorEvent instanceof KeyboardEvent ? 'keys' : 'pointer';
         setWay(by);
@@ -86,7 +106,13 @@ export function BenchScene(props: Props) {
           props.say(`Over ${nameOf(id)}`);
         }
       }}
-      onDragEnd={() => dispatch({ kind: 'drop' })}
+      onDragEnd={() => {
+        dispatch({ kind: 'drop' });
+        const now = hands.current();
+        // Space works on the vessel now; Escape will bring the focus home with the bottle.
+        if (way === 'keys' && now.at === 'poised')
+          focusOn(props.id, `[data-vessel="${CSS.escape(now.into)}"]`);
+      }}
       onDragCancel={() => {
         // Escape has been heard by the hand itself; anything else that ends a drag came from outside.
         dispatch({ kind: 'interrupt' });
@@ -139,6 +165,11 @@ export function BenchScene(props: Props) {
       <Carried item={way === 'pointer' && hand.at === 'carried' && over === null ? (tipped ?? null) : null} />
     </DndContext>
   );
+}
+
+/** Moves the focus within one bench. */
+function focusOn(benchId: string, selector: string): void {
+  document.getElementById(`bench-${benchId}`)?.querySelector<HTMLElement>(selector)?.focus();
 }
 
 /** Tags stand outside the two glasses of a pair; beside words on the wall they all stand on the right. */

@@ -47,7 +47,12 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
   const room_uL = Math.min(...taking.map((vessel) => vessel.room_uL ?? Number.POSITIVE_INFINITY));
 
   return (
-    <section className="bench" data-variant={variant} aria-labelledby={`${spec.id}-title`}>
+    <section
+      id={`bench-${spec.id}`}
+      className="bench"
+      data-variant={variant}
+      aria-labelledby={`${spec.id}-title`}
+    >
       <div className="bench-frame">
         <div className="bench-body">
           <BenchScene

@@ -1,5 +1,5 @@
 export default {
-  content: [],
+  content: [{ raw: '' }],
   theme: {
     colors: {
       ink: '#1d2733',

@@ -36,6 +36,8 @@ export function Tag({
       )}
       {!vessel.mixed && <p className="tag-quiet">not mixed</p>}
       {vessel.doubt && vessel.mixed && <p className="tag-quiet">{vessel.doubt}</p>}
+      {/* The turning bar says it; where nothing may move, words do. */}
+      {vessel.stirring && <p className="tag-quiet still-words">stirring</p>}
       {side !== 'under' && <span className="leader" aria-hidden="true" />}
       {vessel.temperature_C !== null && <p className="tag-quiet">{vessel.temperature_C.toFixed(1)} °C</p>}
     </div>

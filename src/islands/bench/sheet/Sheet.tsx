@@ -46,7 +46,14 @@ export function Sheet({ spec, run, vessel, asksServer }: Props) {
   const start = useMemo(() => startOf(state), [state]);
   const notes = useMemo(() => notesOf(spec, state, seen), [spec, state, seen]);
   const traced = useMemo(() => traceOf(spec, state, seen), [spec, state, seen]);
-  const pair = useMemo(() => pairOf(spec, state, start, vessel, seen), [spec, state, start, vessel, seen]);
+  // The named vessel's pair; where it holds none, the first that there is.
+  const pair = useMemo(() => {
+    for (const id of [vessel, ...spec.vessels.map((one) => one.id)]) {
+      const found = pairOf(spec, state, start, id, seen);
+      if (found) return found;
+    }
+    return null;
+  }, [spec, state, start, vessel, seen]);
   const aims = aimsOf(spec, run.readings, run.metAims, run.locallyMet, asksServer);
   const showsTrace = spec.views === undefined || spec.views.includes('trace');
   const toggle = (view: ViewKind) =>

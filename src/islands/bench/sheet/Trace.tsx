@@ -123,7 +123,7 @@ function Figure({ width, series, aims, strip, added }: Omit<TraceProps, 'absent'
           ))}
         </g>
       ))}
-      {labels(series, x, y, right, top, bottom).map((label) => (
+      {labels(series, x, y, left, right, top, bottom).map((label) => (
         <text key={label.id} className="figure-name" x={label.x} y={label.y} textAnchor="end">
           {label.name}
         </text>
@@ -192,6 +192,7 @@ function labels(
   series: readonly TraceSeries[],
   x: (v: number) => number,
   y: (pH: number) => number,
+  left: number,
   right: number,
   top: number,
   bottom: number,
@@ -202,13 +203,9 @@ function labels(
     let at = y(end.pH) - 14;
     if (at < top + 12) at = y(end.pH) + 24;
     while (placed.some((other) => Math.abs(other.y - at) < 17) && at < bottom - 4) at += 17;
-    const half = one.name.length * 4;
-    placed.push({
-      id: one.id,
-      name: one.name,
-      x: Math.min(right, Math.max(x(end.x_mL) + half, 90 + half)),
-      y: at,
-    });
+    const wide = one.name.length * 7.8;
+    const ends = Math.min(right, Math.max(x(end.x_mL) + wide / 2, left + wide + 8));
+    placed.push({ id: one.id, name: one.name, x: ends, y: at });
   }
   return placed;
 }

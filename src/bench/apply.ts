@@ -1,10 +1,13 @@
 /** The bench's one transition: state and move give the next state or a refusal. Store, server and tests all call it. */
 import { startScene } from './create.ts';
 import { createState } from './create.ts';
-import { isRecord } from './moves/hands.ts';
+import { isRecord, said } from './moves/hands.ts';
 import { refuse, type MoveDefinition, type Situation } from './moves/kinds.ts';
 import { moves } from './moves/registry.ts';
 import type { BenchSpec, BenchState, Move, Outcome, Refusal } from './types.ts';
+
+/** Changes whenever the same moves on the same liquids would end otherwise; stored with a run beside the chemistry's version. */
+export const BENCH_VERSION = '1';
 
 /** A run holds this many moves at most. */
 export const MAX_MOVES = 2000;
@@ -31,10 +34,7 @@ export function check(state: BenchState, move: Move): Refusal | null {
     return state.count === 0 ? refuse('already-so', 'The bench stands as it was at the start.') : null;
   const definition = definitionOf(move.kind);
   if (!definition)
-    return refuse(
-      'unknown-move',
-      `There is no move "${String((move as { kind?: unknown }).kind).slice(0, 40)}".`,
-    );
+    return refuse('unknown-move', `There is no move ${said((move as { kind?: unknown }).kind)}.`);
   const { spec, scene } = state;
   if (spec.moves && !spec.moves.includes(move.kind) && move.kind !== 'wear' && move.kind !== 'wipe') {
     return refuse('not-offered', `"${definition.name}" is not part of this bench.`);

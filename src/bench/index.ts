@@ -5,6 +5,7 @@ export { createState } from './create.ts';
 export {
   apply,
   applyJoined,
+  BENCH_VERSION,
   check,
   combine,
   definitionOf,

@@ -117,6 +117,12 @@ export function readOne(state: BenchState, id: string, seen: Seen = {}): VesselR
   return spec && vessel ? readVessel({ state, seen, spec, glass: glassware[spec.glass], vessel }) : null;
 }
 
+const stockAtStart = (state: BenchState, item: ShelfItem): number => {
+  const dealt = sampleIn(state.spec, state.seed, item.id);
+  return bottleOf(dealt ? { ...item, contents: dealt } : item, state.spec.temperature_C, state.seed)
+    .volume_nL;
+};
+
 /** What was told about the last move, without sentences that hold a hidden number. */
 export function openNotices(state: BenchState, seen: Seen): BenchState['notices'] {
   const pHOpen = !anyHidden(state.spec, seen, 'pH');
@@ -136,9 +142,7 @@ function readBottle(state: BenchState, seen: Seen, item: ShelfItem): BottleReadi
     id: item.id,
     label: item.label,
     kind: item.kind,
-    left_mL: anyHidden(state.spec, seen, 'volume')
-      ? mLShown(bottleOf(item, state.spec.temperature_C, state.seed).volume_nL)
-      : mLShown(volume),
+    left_mL: anyHidden(state.spec, seen, 'volume') ? mLShown(stockAtStart(state, item)) : mLShown(volume),
     empty: volume === 0,
     ...(liquid &&
       volume > 0 &&

@@ -26,7 +26,7 @@ export interface Delivery {
   readonly drops: number;
   /** Liquid that runs in by a tip does not go beside a narrow neck. */
   readonly byTip: boolean;
-  /** The pipette that measures, where one does. */
+  /** The pipette or the marked glass that measures, where it is not the source. */
   readonly measure?: string;
 }
 

@@ -46,8 +46,12 @@ export function findSource(at: Situation, id: unknown): Held | null {
   return item && liquid ? { label: item.label, liquid, item, vessel: null } : null;
 }
 
+/** A vessel by the learner's label where there is one, a bottle by its own. */
 export const nameOf = (at: Situation, id: string): string =>
-  at.spec.vessels.find((v) => v.id === id)?.label ?? at.spec.shelf.find((s) => s.id === id)?.label ?? id;
+  (Object.hasOwn(at.scene.vessels, id) ? at.scene.vessels[id]?.label : null) ??
+  at.spec.vessels.find((v) => v.id === id)?.label ??
+  at.spec.shelf.find((s) => s.id === id)?.label ??
+  id;
 
 const wholeMemo = new WeakMap<Vessel, Solution>();
 /** Everything in a vessel, as if swirled. */
@@ -173,11 +177,11 @@ export function delivered(
   by: { spec: VesselSpec; glass: Glass },
   read_nL: number,
   drops: number,
-  byPipette: boolean,
+  byTool: boolean,
 ): number {
   if (!at.spec.careful) return read_nL;
   const glass = from.vessel?.glass;
-  if (glass?.family === 'burette' && !byPipette) {
+  if (glass?.family === 'burette' && !byTool) {
     const volume = from.liquid.volume_nL;
     const grade = from.vessel?.spec.grade ?? 'B';
     const off =
@@ -187,7 +191,7 @@ export function delivered(
   }
   if (drops > 0)
     return drops * Math.round((read_nL / drops) * (1 + DROP_SPREAD * triangular(at.seed, 'drop', fromId)));
-  const measure = !byPipette && from.vessel && glass?.tolerance_mL ? from.vessel : by;
+  const measure = !byTool && from.vessel && glass?.tolerance_mL ? from.vessel : by;
   const tolerance = toleranceOf(measure.glass, measure.spec.grade ?? 'B', read_nL / 1e6);
   const off = Math.min(tolerance, read_nL / 2e6) * triangular(at.seed, 'measure', at.number, fromId);
   return Math.max(1, Math.round(read_nL + off * 1e6));
@@ -213,8 +217,12 @@ export const wholeNumber = (value: unknown, min: number, max: number): value is 
 export const MAX_UL = 2_000_000;
 export const MAX_DROPS = 2_000;
 
+/** What was given, as far as it can be said. */
+export const said = (value: unknown): string =>
+  typeof value === 'string' ? `"${value.slice(0, 40)}"` : 'such a thing';
+
 export const unknownThing = (id: unknown): Refusal =>
-  refuse('unknown-thing', `There is no "${String(id).slice(0, 40)}" on this bench.`);
+  refuse('unknown-thing', `There is no ${said(id)} on this bench.`);
 
 export const badVolume = (): Refusal =>
   refuse('bad-value', 'Give a volume in whole microlitres, more than 0 and at most 2000 mL.');

@@ -104,12 +104,14 @@ function toMark(
   return { ok: true, volume_nL: missing };
 }
 
+/** The glass that is filled to its mark is what measures. */
 const markDelivery = (from: string, into: string, volume_nL: number): Delivery => ({
   from,
   into,
   read_nL: volume_nL,
   drops: 0,
   byTip: true,
+  measure: into,
 });
 
 export const pourToMark = define<'pourToMark'>({

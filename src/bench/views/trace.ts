@@ -109,7 +109,7 @@ function computeBetween(
   });
 }
 
-/** The traces of this trial, a series for each vessel that shows one. Hidden traces are absent. */
+/** The traces of this trial, a series for each vessel that shows one, since it was last emptied. Hidden traces are absent. */
 export function trace(state: BenchState, seen: Seen = {}): TraceSeries[] {
   const states = trial(state);
   return state.spec.vessels.flatMap((spec) => {
@@ -125,9 +125,17 @@ export function trace(state: BenchState, seen: Seen = {}): TraceSeries[] {
       )
         continue;
       const point = pointOf(s, spec, seen);
-      if (point) {
-        const former = points.at(-1);
-        if (last && former) curve.push(...between(last, s, spec));
+      const former = points.at(-1);
+      // Emptied and begun anew: so is its trace.
+      if (point && former && point.added_mL < former.added_mL) {
+        points.length = 0;
+        curve.length = 0;
+      }
+      if (
+        point &&
+        !(former && former.added_mL === point.added_mL && former.pH === point.pH && former.hex === point.hex)
+      ) {
+        if (last && points.length > 0) curve.push(...between(last, s, spec));
         points.push(point);
         curve.push([point.added_mL, point.pH]);
       }

@@ -104,6 +104,34 @@ describe('views', () => {
     expect(traceSentence(trace(bench.state))).toContain('Ethanoate buffer: pH 4.76 at the start');
   });
 
+  test('the trace of an emptied vessel begins anew', () => {
+    const bench = benchOf(waterOrBuffer)
+      .pickUp('acid')
+      .pour('2 mL')
+      .into('buffer')
+      .do({ kind: 'discard', vessel: 'buffer' })
+      .pickUp('acid')
+      .pour('1 mL')
+      .into('buffer');
+    expect(
+      trace(bench.state)
+        .find((s) => s.vessel === 'buffer')
+        ?.points.map((p) => p.added_mL),
+    ).toEqual([0, 1]);
+  });
+
+  test('a vessel goes by the label that the learner wrote', () => {
+    const bench = benchOf(waterOrBuffer)
+      .do({ kind: 'label', vessel: 'water', text: 'Mine' })
+      .pickUp('acid')
+      .drip(1)
+      .into('water');
+    expect(notebook(bench.state).at(-1)).toMatchObject({
+      what: '1 drop of Hydrochloric acid into Mine',
+      readings: [{ label: 'Mine' }],
+    });
+  });
+
   test('the ledger shows what a drop did, in mmol', () => {
     const bench = benchOf(waterOrBuffer).pickUp('acid').pour('1 mL').into('buffer');
     const book = ledger(bench.state, 'buffer');

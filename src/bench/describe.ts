@@ -12,6 +12,7 @@ function vesselSentence(v: VesselReading): string {
     return `${head}, is empty${v.volume_mL ? ' but wet' : ''}${v.probe ? '; a pH probe hangs in it' : ''}.`;
   const facts: string[] = [];
   if (v.burette_mL !== undefined) facts.push(`reads ${v.burette_mL.toFixed(2)} mL`);
+  else if (v.meniscus !== undefined) facts.push(`has its meniscus ${v.meniscus}`);
   else if (v.volume_mL !== undefined) facts.push(`holds ${v.volume_mL.toFixed(2)} mL`);
   else facts.push('holds a liquid');
   if (v.colour) facts.push(`is ${v.colour.words}`);

@@ -316,3 +316,20 @@ export const buretteReading = (glass: Glass, volume_mL: number): number => glass
 export function toleranceOf(glass: Glass, grade: 'A' | 'B', volume_mL: number): number {
   return glass.tolerance_mL ? glass.tolerance_mL[grade] : (glass.tolerance_share ?? 0) * volume_mL;
 }
+
+/**
+ * Where a burette's meniscus stands, as a look at its marks tells it: no number between the marks is given.
+ * @param volume_mL what the burette holds
+ */
+export function meniscusOf(glass: Glass, volume_mL: number): string {
+  const step = glass.marks?.step_mL ?? 0.1;
+  const place = Math.round((buretteReading(glass, volume_mL) / step) * 100) / 100;
+  const upper = Math.floor(place);
+  const mark = (k: number) => `${(k * step).toFixed(1)} mL mark`;
+  const below = place - upper;
+  if (place < 0) return 'above the 0.0 mL mark';
+  if (below < 0.1) return `at the ${mark(upper)}`;
+  if (below < 0.4) return `just below the ${mark(upper)}`;
+  if (below <= 0.6) return `half way between the ${mark(upper)} and the ${mark(upper + 1)}`;
+  return below > 0.9 ? `at the ${mark(upper + 1)}` : `just above the ${mark(upper + 1)}`;
+}

@@ -1,7 +1,7 @@
 /** What can be seen of the bench: plain JSON for tags, live region, notebook and the server's answers. */
 import type { Solution } from '../chemistry/types.ts';
 import { sampleIn } from './create.ts';
-import { buretteReading, glassware, levelOf, pathOf, type Glass } from './glassware.ts';
+import { buretteReading, glassware, levelOf, meniscusOf, pathOf, type Glass } from './glassware.ts';
 import { anyHidden, hiddenOf, isHidden } from './hiding.ts';
 import { bottleOf, colourOf, drawn, pHOf } from './liquid.ts';
 import { displayed, meterCalibrated } from './meter.ts';
@@ -35,6 +35,10 @@ export function readVolume(spec: BenchSpec, glass: Glass, volume_nL: number): nu
   if (!spec.careful) return mLShown(volume_nL);
   return shown(Math.round(volume_nL / 1e6 / glass.readTo_mL) * glass.readTo_mL, 2);
 }
+
+/** Burettes that the learner reads: in careful mode, and where an aim asks for the reading. Nothing then gives its number. */
+const leftToLearner = (spec: BenchSpec, id: string): boolean =>
+  spec.careful === true || spec.aims.some((aim) => aim.kind === 'reading' && aim.vessel === id);
 
 interface Look {
   readonly state: BenchState;
@@ -75,6 +79,7 @@ function readVessel(look: Look): VesselReading {
   const thermometer = spec.thermometer === true || state.spec.instruments?.thermometer === true;
   const contents = shows('contents') ? contentsInWords(state, spec.id, spec.contents) : null;
   const wet = volume_nL > 0;
+  const left = glass.family === 'burette' && leftToLearner(state.spec, spec.id);
   return {
     id: spec.id,
     label: vessel.label ?? spec.label,
@@ -82,7 +87,7 @@ function readVessel(look: Look): VesselReading {
     capacity_mL: glass.capacity_mL,
     empty: volume_nL <= FILM_NL,
     full: volume_nL >= Math.round(glass.capacity_mL * 1e6),
-    ...(shows('volume') && { volume_mL: readVolume(state.spec, glass, volume_nL) }),
+    ...(shows('volume') && !left && { volume_mL: readVolume(state.spec, glass, volume_nL) }),
     level_cm: shown(levelOf(glass, volume_nL / 1e6), 3),
     mixed: vessel.layer === null,
     ...(pH !== null && { pH }),
@@ -101,7 +106,9 @@ function readVessel(look: Look): VesselReading {
       }),
     ...(glass.family === 'burette' &&
       shows('volume') &&
-      !state.spec.careful && { burette_mL: shown(buretteReading(glass, volume_nL / 1e6), 2) }),
+      (left
+        ? { meniscus: meniscusOf(glass, volume_nL / 1e6) }
+        : { burette_mL: shown(buretteReading(glass, volume_nL / 1e6), 2) })),
     probe: hasProbe(state, spec),
     stirring: vessel.stirring,
     stoppered: vessel.stoppered,

@@ -370,6 +370,8 @@ export interface VesselReading {
   readonly layer?: ColourReading & { readonly share: number };
   /** Burettes: the reading at the meniscus, two decimals, where the bench does not leave it to the learner. */
   readonly burette_mL?: number;
+  /** Burettes that the learner reads: where the meniscus stands between the marks, in words, for those who can't see it. */
+  readonly meniscus?: string;
   readonly probe: boolean;
   readonly stirring: boolean;
   readonly stoppered: boolean;

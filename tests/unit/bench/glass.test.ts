@@ -6,6 +6,7 @@ import {
   heightOf,
   levelOf,
   marksOf,
+  meniscusOf,
   pathOf,
   toleranceOf,
   widthAt,
@@ -77,6 +78,16 @@ describe('glassware', () => {
       expect(volume).toBeCloseTo(glass.capacity_mL * 0.9, 2);
     },
   );
+
+  test.each([
+    [37.65, 'half way between the 12.3 mL mark and the 12.4 mL mark'],
+    [37.7, 'at the 12.3 mL mark'],
+    [37.68, 'just below the 12.3 mL mark'],
+    [37.62, 'just above the 12.4 mL mark'],
+    [50.4, 'above the 0.0 mL mark'],
+  ])('a burette that holds %d mL has its meniscus %s', (volume, words) => {
+    expect(meniscusOf(glassware['burette-50'], volume)).toBe(words);
+  });
 
   test('a 100 mL beaker is looked through 5 cm, and a burette is read from its zero down', () => {
     expect(pathOf(glassware['beaker-100'], 50)).toBe(5);

@@ -227,6 +227,8 @@ describe('careful hands', () => {
     const bench = titration(1);
     expect(((bench.vessel('beaker').volume_mL ?? NaN) / 5) % 1).toBe(0);
     expect(bench.vessel('burette').burette_mL).toBeUndefined();
+    expect(bench.vessel('burette').volume_mL).toBeUndefined();
+    expect(bench.vessel('burette').meniscus).toMatch(/0\.[01] mL mark/);
     bench
       .do({ kind: 'enterReading', vessel: 'burette', value_mL: 0.05 })
       .refused({ kind: 'enterReading', vessel: 'burette', value_mL: 0.03 }, 'bad-value');

@@ -1,20 +1,12 @@
 /** Every move that hands can do, by kind. Buttons, keys, drag, saving and replay all look here. */
 import type { BenchSpec, MoveKind } from '../types.ts';
-import {
-  bubble,
-  discard,
-  enterReading,
-  label,
-  rinse,
-  setTemperature,
-  stir,
-  stopper,
-  swirl,
-} from './glass.ts';
+import { discard, rinse } from './emptying.ts';
+import { bubble, setTemperature, stir, stopper, swirl } from './glass.ts';
 import { calibrate, dipProbe, liftProbe, rinseProbe } from './instruments.ts';
 import type { MoveDefinition } from './kinds.ts';
 import { addIndicator, addToBoth, dispense, drip, fill, pipette, pour, pourToMark } from './pouring.ts';
 import { wear, wipe } from './safety.ts';
+import { enterReading, label } from './writing.ts';
 
 /** Undo and start-again are moves of the list, not of a scene: `apply` does them. */
 type SceneMoves = { readonly [K in Exclude<MoveKind, 'undo' | 'startAgain'>]: MoveDefinition<K> };

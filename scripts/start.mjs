@@ -170,7 +170,7 @@ async function start() {
     SMTP_URL: `smtp://127.0.0.1:${demo.smtpPort}`,
     MAIL_FOLDER: join(DATA, 'mail'),
     MAIL_PAGE_PORT: String(demo.mailPagePort),
-    DEMO_SECRET: demo.secret,
+    COOKIE_SECRET: demo.secret,
     DROPWISE_INSTANCE: instance,
   };
   let failed = false;

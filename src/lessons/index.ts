@@ -1,0 +1,3 @@
+export * from './types.ts';
+export { compile, COMPILER_VERSION, slugOf } from './compile.ts';
+export { forLearner } from './learner.ts';

@@ -1,6 +1,8 @@
 import { solve } from './equilibrium';
+import { encode, linearFromXyz, mapToGamut } from './gamut';
 import { indicatorData } from './indicatorData';
 import { WX, WY, WZ } from './observer';
+import { wordsFor } from './words';
 import type { Colour, Equilibrium, Model, Solution } from './types';
 
 const table = new Map<string, Float64Array>();
@@ -38,18 +40,11 @@ export function colour(solution: Solution, path_cm: number, by: Model | Equilibr
     Y += t * WY[i]!;
     Z += t * WZ[i]!;
   }
-  const srgb = toSrgb(X, Y, Z);
-  const hex = '#' + srgb.map((v) => v.toString(16).padStart(2, '0')).join('');
-  return { xyz: [X, Y, Z], srgb, hex, words: '' };
-}
-function toSrgb(X: number, Y: number, Z: number): [number, number, number] {
-  const lin = [
-    3.2409699 * X - 1.5373832 * Y - 0.4986108 * Z,
-    -0.9692436 * X + 1.8759675 * Y + 0.0415551 * Z,
-    0.0556301 * X - 0.203977 * Y + 1.0569715 * Z,
+  const srgb = mapToGamut(linearFromXyz(X, Y, Z)).map((v) => Math.round(encode(v))) as [
+    number,
+    number,
+    number,
   ];
-  return lin.map((v) => {
-    const c = Math.min(1, Math.max(0, v));
-    return Math.round(255 * (c <= 0.0031308 ? 12.92 * c : 1.055 * c ** (1 / 2.4) - 0.055));
-  }) as [number, number, number];
+  const hex = '#' + srgb.map((v) => v.toString(16).padStart(2, '0')).join('');
+  return { xyz: [X, Y, Z], srgb, hex, words: wordsFor(X, Y, Z) };
 }

@@ -1,4 +1,4 @@
-import { useState, type ReactNode } from 'react';
+import { useCallback, useState, type ReactNode } from 'react';
 import type { BenchSpec, Move } from '../../bench/types';
 import './bench.css';
 import { BenchView } from './BenchView';
@@ -49,6 +49,10 @@ export function Bench({ lesson, spec, run, signedIn, hazards, variant = 'lesson'
         : {}),
     }),
   );
+  const sheet = useCallback(
+    (now: RunView, vessel: string) => <Sheet spec={spec} run={now} vessel={vessel} asksServer={signedIn} />,
+    [spec, signedIn],
+  );
   return (
     <BenchView
       spec={spec}
@@ -56,11 +60,7 @@ export function Bench({ lesson, spec, run, signedIn, hazards, variant = 'lesson'
       variant={variant}
       hazardsOf={(item) => hazards?.[item.id] ?? []}
       savingWords={(now) => SAVING_WORDS[now.saving]}
-      sheet={
-        variant === 'lesson'
-          ? (now, vessel) => <Sheet spec={spec} run={now} vessel={vessel} asksServer={signedIn} />
-          : undefined
-      }
+      sheet={variant === 'lesson' ? sheet : undefined}
     >
       {children}
     </BenchView>

@@ -32,7 +32,8 @@ interface Props {
   words: ReactNode;
 }
 
-const DRAG_PX = 6;
+// Objects that never change keep dnd-kit from renewing its context with every frame of a pour.
+const POINTER = { activationConstraint: { distance: 6 } };
 const HOW =
   'Press Enter to pick up the bottle. Arrow keys carry it from vessel to vessel. Hold Space to pour, tap Space for one drop. Enter leaves it tipped over the vessel, Escape puts it back on the shelf.';
 
@@ -50,13 +51,14 @@ export function BenchScene(props: Props) {
     // eslint-disable-next-line react-hooks/exhaustive-deps
     [],
   );
-  const sensors = useSensors(
-    useSensor(PointerSensor, { activationConstraint: { distance: DRAG_PX } }),
-    useSensor(KeyboardSensor, {
+  const keys = useMemo(
+    () => ({
       coordinateGetter: getter,
       keyboardCodes: { start: ['Enter'], cancel: ['Escape'], end: ['Enter'] },
     }),
+    [getter],
   );
+  const sensors = useSensors(useSensor(PointerSensor, POINTER), useSensor(KeyboardSensor, keys));
 
   const carried = inHand(hand);
   const over = target(hand);
@@ -85,11 +87,7 @@ export function BenchScene(props: Props) {
       id={`bench-${props.id}`}
       sensors={sensors}
       collisionDetection={overVessel}
-      accessibility={{
-        announcements: SILENT,
-        restoreFocus: false,
-        screenReaderInstructions: { draggable: HOW },
-      }}
+      accessibility={ACCESS}
       onDragStart={(event) => {
         const by = event.activatorEvent instanceof KeyboardEvent ? 'keys' : 'pointer';
         setWay(by);
@@ -185,6 +183,8 @@ const SILENT = {
   onDragEnd: () => undefined,
   onDragCancel: () => undefined,
 };
+
+const ACCESS = { announcements: SILENT, restoreFocus: false, screenReaderInstructions: { draggable: HOW } };
 
 interface AtProps {
   benchId: string;

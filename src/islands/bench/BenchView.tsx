@@ -1,4 +1,4 @@
-import { lazy, Suspense, useState, type ReactNode } from 'react';
+import { lazy, Suspense, useMemo, useState, type ReactNode } from 'react';
 import { describe } from '../../bench/describe';
 import type { BenchSpec, ShelfItem } from '../../bench/types';
 import { Apron, type ApronProps, type Choice } from './apron/Apron';
@@ -38,6 +38,12 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
   const [asking, setAsking] = useState(false);
   const [more, setMore] = useState(false);
   const lesson = variant === 'lesson';
+  // While something flows, the words wait: tags and the running volume tell it, and the rest is said when it ends.
+  const [told, setTold] = useState(run);
+  if (!run.pouring && told !== run) setTold(run);
+  const description = useMemo(() => describe(told.readings), [told.readings]);
+  const sheetVessel = into === BOTH ? (vessels[1]?.id ?? '') : into;
+  const below = useMemo(() => sheet?.(told, sheetVessel), [sheet, told, sheetVessel]);
 
   const stock_uL =
     shelf.find((item) => item.id === from)?.left_uL ??
@@ -60,7 +66,7 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
             title={spec.title}
             lead={spec.intro ?? null}
             model={modelWords(spec)}
-            description={describe(run.readings)}
+            description={description}
             vessels={vessels}
             shelf={shelf}
             from={from}
@@ -109,7 +115,9 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
             onVolume={bench.setVolume}
             onAdd={bench.add}
             onUndo={bench.undo}
-            onAgain={() => setAsking(true)}
+            onAgain={() =>
+              run.moves.length > 0 ? setAsking(true) : say('The bench stands as it did at the start')
+            }
           >
             {more && (
               <Suspense fallback={<p className="under">Fetching the other moves</p>}>
@@ -125,7 +133,7 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
               </Suspense>
             )}
           </Apron>
-          {sheet?.(run, into === BOTH ? (vessels[1]?.id ?? '') : into)}
+          {below}
         </div>
       </div>
       {bench.liveRegion}

@@ -59,6 +59,7 @@ export const spec: BenchSpec = {
     },
     { id: 'wash', label: 'Boiled water', kind: 'wash', contents: { volume_mL: 500, water: 'boiled' } },
   ],
+  ...(query.has('hidden') ? { hide: [{ what: ['pH'], until: 'prediction' }] as const } : {}),
   aims: [
     { id: 'yellow', text: 'Turn the water yellow', kind: 'colour', vessel: 'water', words: ['yellow'] },
     {

@@ -96,6 +96,25 @@ async function waitUntilReady(instance, failed) {
 }
 
 /**
+ * Starts the database again when it has ended although nobody asked it to. The other processes wait for it.
+ * @param {() => number} pid @param {() => Promise<void>} startAgain
+ */
+function watchDatabase(pid, startAgain) {
+  let busy = false;
+  const look = async () => {
+    if (busy || stopping || existsSync(`/proc/${pid()}`)) return;
+    busy = true;
+    say('MariaDB ended unexpectedly: starting it again');
+    await startAgain().catch((error) => {
+      console.error(error.message);
+      void stop(1);
+    });
+    busy = false;
+  };
+  setInterval(() => void look(), 250).unref();
+}
+
+/**
  * Migrates, publishes the shipped course and loads the demo world.
  * @param {NodeJS.ProcessEnv} env
  * @returns {Promise<string>} what it has to say, such as the demo's sign-ins
@@ -140,13 +159,16 @@ async function start() {
   const demo = await requireSecrets();
 
   const database = { database: 'dropwise', user: 'dropwise', password: demo.databasePassword };
-  const mariadb = await startMariadb({
-    folder: join(DATA, 'mariadb'),
-    port: demo.databasePort,
-    ...database,
-    say,
-  });
+  const startDatabase = () =>
+    startMariadb({ folder: join(DATA, 'mariadb'), port: demo.databasePort, ...database, say });
+  let mariadb = await startDatabase();
   undo.unshift(() => mariadb.stop());
+  watchDatabase(
+    () => mariadb.pid,
+    async () => {
+      mariadb = await startDatabase();
+    },
+  );
 
   const { build, isBuilt } = await import('./build.mjs');
   if (!isBuilt()) {

@@ -97,9 +97,10 @@ test('an endpoint’s error is Problem Details', async () => {
   });
 });
 
-test('pages are compressed and name their character set', async ({ request }) => {
-  const answer = await request.get('/', { headers: { 'Accept-Encoding': 'br' } });
-  expect(answer.headers()['content-type']).toBe('text/html; charset=utf-8');
+test('pages are compressed and name their character set', async () => {
+  const { headers } = await send('GET /', { 'Accept-Encoding': 'br' });
+  expect(headers['content-encoding']).toBe('br');
+  expect(headers['content-type']).toBe('text/html; charset=utf-8');
 });
 
 test('the process is alive and ready', async ({ request }) => {

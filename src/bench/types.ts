@@ -254,6 +254,7 @@ export interface Refusal {
     | 'no-probe'
     | 'not-offered'
     | 'nothing-to-undo'
+    | 'predict-first'
     | 'cannot-unpour'
     | 'nothing-to-wipe'
     | 'no-such-mark'

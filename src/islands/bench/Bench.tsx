@@ -1,26 +1,18 @@
-import { useCallback, useState, type ReactNode } from 'react';
-import type { BenchSpec, Move } from '../../bench/types';
+import { useState, type ReactNode } from 'react';
+import { useStore } from 'zustand';
+import type { BenchSpec } from '../../bench/types';
 import './bench.css';
 import { BenchView } from './BenchView';
 import type { RunView } from './run';
 import { Sheet } from './sheet/Sheet';
 import { createBenchStore } from './store/index';
-
-/** A run that the server or this browser kept. */
-export interface KeptRun {
-  readonly runId?: string;
-  readonly seed: number;
-  readonly moves: readonly Move[];
-  readonly metAims: readonly string[];
-  readonly predicted?: boolean;
-}
+import { WorkQuestions } from './sync/WorkQuestions';
+import { workFor, type GivenWork, type Work } from './sync/work';
 
 export interface BenchProps {
-  /** The lesson's id; runs hang on it. */
-  lesson: string;
   spec: BenchSpec;
-  run?: KeptRun;
-  signedIn: boolean;
+  /** What the server holds of this person's work here; absent where nothing is kept (the home page). */
+  given?: GivenWork;
   /** Hazard marks by shelf id, from the reviewed data of each concentration; most dilute bottles have none. */
   hazards?: Readonly<Record<string, readonly string[]>>;
   variant?: 'lesson' | 'home';
@@ -29,42 +21,44 @@ export interface BenchProps {
 }
 
 const SAVING_WORDS: Record<RunView['saving'], string> = {
-  local: 'On this page only',
+  local: 'Kept in this browser',
   saving: 'Saving',
   saved: 'Saved',
   offline: 'Not connected. Your moves are kept here and sent later.',
   conflict: 'This bench was worked on somewhere else, too.',
-  full: 'This run is full. Start a new one to go on.',
+  full: 'This run is full. Begin a new one to go on.',
 };
 
 /** A bench as an island: `client:visible`, or rendered on the server alone as a still picture with its words. */
-export function Bench({ lesson, spec, run, signedIn, hazards, variant = 'lesson', children }: BenchProps) {
-  const [store] = useState(() =>
-    createBenchStore({
-      lesson,
-      spec,
-      signedIn,
-      ...(run
-        ? { seed: run.seed, moves: run.moves, metAims: run.metAims, predicted: run.predicted ?? false }
-        : {}),
-    }),
-  );
-  const sheet = useCallback(
-    (now: RunView, vessel: string) => <Sheet spec={spec} run={now} vessel={vessel} asksServer={signedIn} />,
-    [spec, signedIn],
-  );
+export function Bench({ spec, given, hazards, variant = 'lesson', children }: BenchProps) {
+  const [work] = useState<Work | undefined>(() => (given ? workFor(given) : undefined));
+  const [store] = useState(() => createBenchStore({ spec, work }));
   return (
-    <BenchView
-      spec={spec}
-      store={store}
-      variant={variant}
-      hazardsOf={(item) => hazards?.[item.id] ?? []}
-      savingWords={(now) => SAVING_WORDS[now.saving]}
-      sheet={variant === 'lesson' ? sheet : undefined}
-    >
-      {children}
-    </BenchView>
+    <>
+      {work && <Questions work={work} />}
+      <BenchView
+        spec={spec}
+        store={store}
+        variant={variant}
+        hazardsOf={(item) => hazards?.[item.id] ?? []}
+        savingWords={(now) => (given ? SAVING_WORDS[now.saving] : '')}
+        sheet={
+          variant === 'lesson'
+            ? (now, vessel) => (
+                <Sheet spec={spec} run={now} vessel={vessel} asksServer={given?.person != null} />
+              )
+            : undefined
+        }
+      >
+        {children}
+      </BenchView>
+    </>
   );
+}
+
+function Questions({ work }: { work: Work }) {
+  const { strangers, saving, word } = useStore(work.store);
+  return <WorkQuestions work={work} strangers={strangers} saving={saving} word={word} />;
 }
 
 export default Bench;

@@ -34,3 +34,8 @@ export function mayOpenLesson(
   if (lesson.access === 'open') return true;
   return (standing?.memberships.length ?? 0) > 0;
 }
+
+/** The schools that a person belongs to now. */
+export const standingSchools = (standing: Standing | null): number[] => [
+  ...new Set((standing?.memberships ?? []).flatMap(({ schoolId }) => (schoolId === null ? [] : [schoolId]))),
+];

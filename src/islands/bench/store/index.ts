@@ -1,30 +1,39 @@
 import { createStore } from 'zustand/vanilla';
-import { apply, createState, judge, movesOf, preview, read, replay } from '../../../bench/index.ts';
+import {
+  apply,
+  applyJoined,
+  createState,
+  judge,
+  judgeRun,
+  movesOf,
+  preview,
+  read,
+  replay,
+} from '../../../bench/index.ts';
 import type { BenchSpec, BenchState, Move, Seen } from '../../../bench/types.ts';
 import { delivery } from '../apron/deeds';
 import type { RunStore, RunView } from '../run';
+import { tellDone } from '../sync/done';
+import type { Work } from '../sync/work';
 
-export interface BenchStoreOptions {
-  readonly lesson: string;
-  readonly spec: BenchSpec;
-  readonly signedIn: boolean;
-  readonly seed?: number;
-  /** Moves of a run that is taken up again. */
-  readonly moves?: readonly Move[];
-  readonly metAims?: readonly string[];
-  readonly predicted?: boolean;
-}
+const PREDICT_FIRST = {
+  code: 'predict-first',
+  sentence: 'Lock in your prediction above, then the bench opens.',
+} as const;
 
 /**
  * One run of a bench in this page: moves go through the same engine as on the server, a pour under way is a preview, and
- * what a reader may see follows from what they have earned.
+ * what a reader may see follows from what they have earned. What is kept, and where, is the work's business.
+ * @param work absent where nothing is kept: the home page's bench
  */
-export function createBenchStore(options: BenchStoreOptions): RunStore {
-  const { spec, seed = 1 } = options;
-  const first: BenchState =
-    options.moves && options.moves.length > 0
-      ? replay(spec, seed, options.moves).state
-      : createState(spec, { seed });
+export function createBenchStore({ spec, work }: { spec: BenchSpec; work?: Work | undefined }): RunStore {
+  const seed = work?.seed() ?? 1;
+  const needsPrediction = work?.given.prediction != null;
+  const start = (): BenchState => {
+    const moves = work?.moves() ?? [];
+    return moves.length > 0 ? replay(spec, work!.seed(), moves).state : createState(spec, { seed });
+  };
+  const first = start();
   let pour: { readonly from: string; readonly into: string } | null = null;
 
   return createStore<RunView>()((set, get) => {
@@ -40,14 +49,52 @@ export function createBenchStore(options: BenchStoreOptions): RunStore {
         refusal: undefined,
         pouring: undefined,
       });
+      if (met.length > locallyMet.length) tellDone(met);
+      return met.length > locallyMet.length;
     };
+    /** The newest move met an aim: it stays as it is, so that the server sees that state, too. */
+    let fixed = true;
     const act = (move: Move) => {
-      const outcome = apply(get().state, move);
-      if (outcome.ok) settle(outcome.state);
-      else set({ refusal: outcome.refusal });
+      if (needsPrediction && !get().predicted) return set({ refusal: PREDICT_FIRST });
+      const mayGrow = !fixed && (work?.newestIsHere() ?? true);
+      const outcome = mayGrow ? applyJoined(get().state, move) : apply(get().state, move);
+      if (!outcome.ok) return set({ refusal: outcome.refusal });
+      const grown = 'grown' in outcome && outcome.grown === true;
+      fixed = settle(outcome.state);
+      if (grown) work?.growNewest(outcome.state.move!);
+      else work?.add(move);
     };
-    const metAims = options.metAims ?? [];
-    const predicted = options.predicted ?? false;
+
+    if (work) {
+      work.listen({
+        load: () => {
+          const state = start();
+          pour = null;
+          fixed = true;
+          const met = [...work.store.getState().metAims, ...judgeRun(state).map(({ id }) => id)];
+          set({ locallyMet: [...new Set(met)] });
+          settle(state);
+          tellDone(met);
+        },
+      });
+      work.store.subscribe(({ saving, metAims, prediction, word }) => {
+        const predicted = prediction !== null;
+        const now = get();
+        set({
+          saving,
+          metAims,
+          locallyMet: [...new Set([...now.locallyMet, ...metAims])],
+          predicted,
+          ...(predicted === now.predicted
+            ? {}
+            : { refusal: undefined, readings: read(now.state, { ...seen(), predicted }) }),
+          ...(word ? { refusal: { code: 'not-offered' as const, sentence: word } } : {}),
+        });
+      });
+    }
+    const begin = work?.store.getState();
+    const metAims = begin?.metAims ?? [];
+    const predicted = !needsPrediction || begin?.prediction != null;
     return {
       state: first,
       readings: read(first, { predicted, metAims }),
@@ -55,9 +102,10 @@ export function createBenchStore(options: BenchStoreOptions): RunStore {
       metAims,
       locallyMet: metAims,
       predicted,
-      saving: 'local',
+      saving: begin?.saving ?? 'local',
       act,
       startPour: (from, into) => {
+        if (needsPrediction && !get().predicted) return set({ refusal: PREDICT_FIRST });
         pour = { from, into };
         set({ pouring: { from, into, volume_uL: 0 }, refusal: undefined });
       },

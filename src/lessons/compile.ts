@@ -1,29 +1,44 @@
 import type { Root, RootContent } from 'mdast';
 import type { z } from 'zod';
-import { createState, type BenchSpec } from '../bench/index.ts';
-import { computeOutcome } from './outcome.ts';
-import { parseMarkdown, prepareProse, renderProse } from './prose.ts';
+import type { BenchSpec } from '../bench/index.ts';
+import { benchProblems } from './benchProblems.ts';
+import type { RunScope } from './formula.ts';
+import { tooMuch } from './limits.ts';
+import { compareOutcome, computeOutcome } from './outcome.ts';
+import { nearest } from './nearest.ts';
+import { computeQuantities, parseMarkdown, prepareProse, renderProse } from './prose.ts';
+import { buildQuestion } from './questions/build.ts';
+import { questionSchema, type QuestionYaml } from './questions/schema.ts';
 import { benchSchema, frontMatterSchema, predictionSchema } from './schemas.ts';
-import type { Block, Checkpoint, Compiled, Fault } from './types.ts';
-import { readYaml } from './yaml.ts';
+import type { Block, Checkpoint, Compiled, Fault, Prediction } from './types.ts';
+import { readYaml, type Where } from './yaml.ts';
 
 /** Raised whenever the compiled form changes; stored lessons of an older one are compiled again at deployment. */
-export const COMPILER_VERSION = 1;
+export const COMPILER_VERSION = 2;
 
-const LONGEST = 200_000;
-/** Nested lists and quotes beyond this are a mistake or an attack; the parser's work grows with them. */
-const DEEPEST = 40;
+type Read =
+  | { readonly kind: 'prose'; readonly nodes: RootContent[] }
+  | { readonly kind: 'bench'; readonly spec: BenchSpec }
+  | { readonly kind: 'prediction'; readonly line: number; readonly yaml: z.output<typeof predictionSchema> }
+  | { readonly kind: 'question'; readonly yaml: QuestionYaml; readonly where: Where };
 
 /**
- * Compiles a lesson: CommonMark with YAML front matter, and fenced blocks `bench` and `prediction`.
+ * Compiles a lesson: CommonMark with YAML front matter, and fenced blocks `bench`, `prediction` and `question`.
  * @param markdown the whole file
  * @param options.file its name, for faults; the slug is its name without number and ending
  * @returns the lesson, or every fault found with its line and column. Never throws on any text.
  */
 export function compile(markdown: string, { file }: { file: string }): Compiled {
   const faults: Fault[] = [];
-  const add = (line: number, column: number, message: string, fix?: string) =>
-    void faults.push({ file, line, column, message, ...(fix ? { fix } : {}) });
+  const add = (line: number, column: number, message: string, fix?: string, found?: string) =>
+    void faults.push({
+      file,
+      line,
+      column,
+      message,
+      ...(found === undefined ? {} : { found }),
+      ...(fix === undefined ? {} : { fix }),
+    });
   const refused = tooMuch(markdown);
   if (refused) return { ok: false, faults: [{ file, line: 1, column: 1, message: refused }] };
 
@@ -44,16 +59,13 @@ export function compile(markdown: string, { file }: { file: string }): Compiled 
   }
   const model = head?.model ?? 'textbook';
 
-  const blocks: Block[] = [];
+  // First all blocks are read, so that prose and questions may speak of a bench that comes later.
+  const parts: Read[] = [];
   const checkpoints: Checkpoint[] = [];
   const benches = new Map<string, BenchSpec>();
+  /** Benches with faults of their own: what leans on them is not blamed as well. */
+  const faulty = new Set<string>();
   const ids = new Map<string, number>();
-  const pending: { at: number; line: number; value: z.output<typeof predictionSchema> }[] = [];
-  let prose: RootContent[] = [];
-  const flush = () => {
-    if (prose.length > 0) blocks.push({ kind: 'prose', html: renderProse(prose) });
-    prose = [];
-  };
   const claim = (id: string, line: number) => {
     const before = ids.get(id);
     if (before !== undefined)
@@ -61,98 +73,148 @@ export function compile(markdown: string, { file }: { file: string }): Compiled 
         line,
         1,
         `The id '${id}' was used already in line ${before}. Progress hangs on ids: choose another.`,
+        undefined,
+        id,
       );
     else ids.set(id, line);
   };
-
   for (const node of tree.children) {
     if (node.type === 'yaml') continue;
     if (node.type !== 'code' || !BLOCKS.has(node.lang ?? '')) {
       findNested(node, add);
-      prose.push(node);
+      const last = parts.at(-1);
+      if (last?.kind === 'prose') last.nodes.push(node);
+      else parts.push({ kind: 'prose', nodes: [node] });
       continue;
     }
-    flush();
     const line = node.position!.start.line;
     const place = { file, lineBefore: line };
+    const block = parts.length;
     if (node.lang === 'bench') {
       const read = readYaml(node.value, benchSchema, 'bench', place);
       if (!read.ok) {
         faults.push(...read.faults);
+        const id = /^id:\s*([a-z0-9-]+)/m.exec(node.value)?.[1];
+        if (id) faulty.add(id);
         continue;
       }
       const spec = { ...read.value, model } as BenchSpec;
       claim(spec.id, line);
-      for (const problem of benchProblems(spec)) add(line, 1, problem);
-      benches.set(spec.id, spec);
+      const problems = benchProblems(spec);
+      for (const { path, message, fix, found } of problems) {
+        const at = read.where(...path);
+        add(at.line, at.column, message, fix, found);
+      }
+      if (problems.length === 0) benches.set(spec.id, spec);
+      else faulty.add(spec.id);
       for (const aim of spec.aims) {
         claim(aim.id, line);
-        checkpoints.push({ id: aim.id, kind: 'aim', title: aim.text, block: blocks.length });
+        checkpoints.push({ id: aim.id, kind: 'aim', title: aim.text, block });
       }
-      blocks.push({ kind: 'bench', spec });
-    } else {
+      parts.push({ kind: 'bench', spec });
+    } else if (node.lang === 'prediction') {
       const read = readYaml(node.value, predictionSchema, 'prediction', place);
       if (!read.ok) {
         faults.push(...read.faults);
         continue;
       }
       claim(read.value.id, line);
-      checkpoints.push({
-        id: read.value.id,
-        kind: 'prediction',
-        title: 'Your prediction',
-        block: blocks.length,
-      });
-      pending.push({ at: blocks.length, line, value: read.value });
-      // Its outcome is computed once the bench that follows is known.
-      blocks.push({ kind: 'prose', html: '' });
+      checkpoints.push({ id: read.value.id, kind: 'prediction', title: 'Your prediction', block });
+      parts.push({ kind: 'prediction', line, yaml: read.value });
+    } else {
+      const read = readYaml(node.value, questionSchema, 'question', place);
+      if (!read.ok) {
+        faults.push(...read.faults);
+        continue;
+      }
+      claim(read.value.id, line);
+      const count = checkpoints.filter(({ kind }) => kind === 'question').length;
+      checkpoints.push({ id: read.value.id, kind: 'question', title: `Question ${count + 1}`, block });
+      parts.push({ kind: 'question', yaml: read.value, where: read.where });
     }
   }
-  flush();
 
-  for (const { at, line, value } of pending) {
-    const spec = benches.get(value.bench);
-    const where = blocks.findIndex((block) => block.kind === 'bench' && block.spec.id === value.bench);
-    if (!spec) {
-      add(line, 1, `There is no bench '${value.bench}' for this prediction.`);
-      continue;
+  const scope: RunScope = { model, benches, values: {} };
+  const addUnlessFaulty = (
+    line: number,
+    column: number,
+    { message, fix, found }: { message: string; fix?: string | undefined; found?: string | undefined },
+  ) => {
+    if (!(message.startsWith('This lesson has no bench') && faulty.has(found ?? '')))
+      add(line, column, message, fix, found);
+  };
+  const blocks = parts.map((part, at): Block | null => {
+    switch (part.kind) {
+      case 'bench':
+        return part;
+      case 'prose':
+        computeQuantities(part.nodes, scope, ({ line, column }, error) =>
+          addUnlessFaulty(line, column, error),
+        );
+        return { kind: 'prose', html: renderProse(part.nodes) };
+      case 'prediction': {
+        if (faulty.has(part.yaml.bench)) return null;
+        const spec = predictionOf(part, benches, add);
+        const where = parts.findIndex((one) => one.kind === 'bench' && one.spec.id === part.yaml.bench);
+        if (where >= 0 && where < at)
+          add(part.line, 1, 'A prediction comes before its bench: move this block above it.');
+        return spec && { kind: 'prediction', spec };
+      }
+      case 'question': {
+        const spec = buildQuestion(part.yaml, {
+          file,
+          where: part.where,
+          scope,
+          add: ({ line, column }, message, fix, found) =>
+            addUnlessFaulty(line, column, { message, fix, found }),
+        });
+        return spec && { kind: 'question', spec };
+      }
     }
-    if (where < at) add(line, 1, 'A prediction comes before its bench: move this block above it.');
-    const { outcome: ask, options, ...rest } = value;
-    const outcome = computeOutcome(spec, ask, options);
-    if ('error' in outcome) {
-      add(line, 1, `The outcome of this prediction cannot be computed. ${outcome.error}`);
-      continue;
-    }
-    blocks[at] = {
-      kind: 'prediction',
-      spec: { ...rest, options: options.map(({ id, text }) => ({ id, text })), outcome },
-    };
-  }
+  });
   if (!head || faults.length > 0)
     return { ok: false, faults: faults.sort((a, b) => a.line - b.line || a.column - b.column) };
   return {
     ok: true,
-    lesson: { ...head, slug: slugOf(file), compilerVersion: COMPILER_VERSION, blocks, checkpoints },
+    lesson: {
+      ...head,
+      slug: slugOf(file),
+      compilerVersion: COMPILER_VERSION,
+      blocks: blocks.filter((block) => block !== null),
+      checkpoints,
+    },
   };
 }
 
-const BLOCKS = new Set(['bench', 'prediction']);
+const BLOCKS = new Set(['bench', 'prediction', 'question']);
 
 export const slugOf = (file: string): string =>
   file.split('/').at(-1)!.replace(/\.md$/, '').replace(/^\d+-/, '');
 
-function tooMuch(markdown: string): string | null {
-  if (markdown.length > LONGEST)
-    return `This lesson has ${markdown.length} characters; ${LONGEST} are the most.`;
-  for (const line of markdown.split('\n')) {
-    const marks = /^[\s>*+\-\d.)]*/.exec(line)![0];
-    if (marks.replace(/[\s\d.)]/g, '').length > DEEPEST || /^ {200}/.test(line))
-      return `Lists and quotes are nested more than ${DEEPEST} deep.`;
-    if (/[[(*_`$]{200}/.test(line) || /(!?\[){100}/.test(line))
-      return 'A line repeats the same signs too often.';
+function predictionOf(
+  { line, yaml }: { line: number; yaml: z.output<typeof predictionSchema> },
+  benches: ReadonlyMap<string, BenchSpec>,
+  add: (line: number, column: number, message: string, fix?: string, found?: string) => void,
+): Prediction | null {
+  const bench = benches.get(yaml.bench);
+  if (!bench) {
+    const close = nearest(yaml.bench, [...benches.keys()]);
+    add(
+      line,
+      1,
+      `There is no bench '${yaml.bench}' for this prediction.`,
+      close ? `bench: ${close}` : undefined,
+      yaml.bench,
+    );
+    return null;
   }
-  return null;
+  const { outcome: ask, options, ...rest } = yaml;
+  const outcome = 'drip' in ask ? computeOutcome(bench, ask, options) : compareOutcome(bench, ask, options);
+  if ('error' in outcome) {
+    add(line, 1, `The outcome of this prediction cannot be computed. ${outcome.error}`);
+    return null;
+  }
+  return { ...rest, options: options.map(({ id, text }) => ({ id, text })), outcome };
 }
 
 /** A block inside a list or a quote would be torn out of it: it has to stand by itself. */
@@ -167,30 +229,4 @@ function findNested(node: RootContent, add: (line: number, column: number, messa
       );
     findNested(child, add);
   }
-}
-
-/** What the schema cannot see: names that point to nothing, glasses too small, substances that do not exist. */
-function benchProblems(spec: BenchSpec): string[] {
-  const problems: string[] = [];
-  const vessels = new Set(spec.vessels.map((vessel) => vessel.id));
-  const all = new Set([...vessels, ...spec.shelf.map((item) => item.id)]);
-  if (all.size < spec.vessels.length + spec.shelf.length)
-    problems.push('Two things on this bench have the same id.');
-  for (const aim of spec.aims) {
-    const named = [
-      ...('vessel' in aim && aim.vessel ? [aim.vessel] : []),
-      ...('vessels' in aim ? aim.vessels : []),
-    ];
-    for (const vessel of named)
-      if (!vessels.has(vessel))
-        problems.push(`The aim '${aim.id}' names the vessel '${vessel}', which this bench does not have.`);
-    if ('of' in aim && !all.has(aim.of))
-      problems.push(`The aim '${aim.id}' names '${aim.of}', which this bench does not have.`);
-  }
-  try {
-    createState(spec, { seed: 1 });
-  } catch (error) {
-    problems.push((error as Error).message);
-  }
-  return problems;
 }

@@ -1,3 +1,15 @@
 export * from './types.ts';
 export { compile, COMPILER_VERSION, slugOf } from './compile.ts';
 export { forLearner } from './learner.ts';
+export {
+  formatNumber,
+  formatProse,
+  formatQuantity,
+  unitName,
+  USUAL,
+  type Conventions,
+  type NumberStyle,
+} from './format.ts';
+export { misconceptions } from './misconceptions.ts';
+export { AnswerError, mark, TELLING_ATTEMPT } from './questions/mark.ts';
+export type { Answer, Marking, Question, QuestionForLearner, QuestionKind, Tube } from './questions/types.ts';

@@ -1,26 +1,35 @@
-import { forBrowser, type BenchSpec } from '../bench/index.ts';
-import type { CompiledLesson, PredictionForLearner } from './types.ts';
+import { forBrowser } from '../bench/index.ts';
+import { formatProse } from './format.ts';
+import { questionForLearner } from './questions/learner.ts';
+import type { CompiledLesson, Learner, LearnerBlock } from './types.ts';
 
-export type LearnerBlock =
-  | { readonly kind: 'prose'; readonly html: string }
-  | { readonly kind: 'bench'; readonly spec: BenchSpec; readonly prediction: string | null }
-  | { readonly kind: 'prediction'; readonly spec: PredictionForLearner };
-
-/** The lesson as a page may hold it: outcomes and whatever a bench keeps secret stay on the server. */
-export function forLearner(lesson: CompiledLesson): readonly LearnerBlock[] {
+/**
+ * The lesson as a page may hold it: outcomes, keys, feedback and whatever a bench keeps secret stay on the server.
+ * @param learner whose variants and conventions; without one, those of a visitor
+ */
+export function forLearner(lesson: CompiledLesson, learner: Learner = { seed: 1 }): readonly LearnerBlock[] {
   return lesson.blocks.map((block): LearnerBlock => {
-    if (block.kind === 'prose') return block;
-    if (block.kind === 'bench') {
-      const before = lesson.blocks.find(
-        (other) => other.kind === 'prediction' && other.spec.bench === block.spec.id,
-      );
-      return {
-        kind: 'bench',
-        spec: forBrowser(block.spec),
-        prediction: before?.kind === 'prediction' ? before.spec.id : null,
-      };
+    switch (block.kind) {
+      case 'prose':
+        return learner.conventions
+          ? { kind: 'prose', html: formatProse(block.html, learner.conventions) }
+          : block;
+      case 'bench': {
+        const before = lesson.blocks.find(
+          (other) => other.kind === 'prediction' && other.spec.bench === block.spec.id,
+        );
+        return {
+          kind: 'bench',
+          spec: forBrowser(block.spec),
+          prediction: before?.kind === 'prediction' ? before.spec.id : null,
+        };
+      }
+      case 'prediction': {
+        const { id, bench, ask, options, observe } = block.spec;
+        return { kind: 'prediction', spec: { id, bench, ask, options, observe } };
+      }
+      case 'question':
+        return { kind: 'question', spec: questionForLearner(lesson, block.spec, learner) };
     }
-    const { id, bench, ask, options, observe } = block.spec;
-    return { kind: 'prediction', spec: { id, bench, ask, options, observe } };
   });
 }

@@ -1,3 +1,4 @@
+import { solve } from '../chemistry/index.ts';
 import { apply, createState, read, type BenchSpec } from '../bench/index.ts';
 import type { PredictionOutcome } from './types.ts';
 
@@ -14,16 +15,9 @@ export function computeOutcome(
   const drops: { vessel: string; label: string; drops: number | null }[] = [];
   for (const vessel of ask.into) {
     const label = bench.vessels.find((one) => one.id === vessel)?.label ?? vessel;
-    let state = createState(bench, { seed: 1 });
-    let found: number | null = null;
-    for (let n = 1; n <= ask.most_drops && found === null; n++) {
-      const outcome = apply(state, { kind: 'drip', from: ask.drip, into: vessel, drops: 1 });
-      if (!outcome.ok) return { error: outcome.refusal.sentence };
-      state = outcome.state;
-      const words = read(state, { predicted: true }).vessels.find((one) => one.id === vessel)?.colour?.words;
-      if (words !== undefined && ask.until.includes(words)) found = n;
-    }
-    drops.push({ vessel, label, drops: found });
+    const found = colourOfDrip(bench, ask.drip, vessel, ask.until, ask.most_drops);
+    if ('error' in found) return found;
+    drops.push({ vessel, label, drops: found.drops });
   }
   const least = Math.min(...drops.map((one) => one.drops ?? Infinity));
   const winners = drops.filter((one) => one.drops === least && least < Infinity);
@@ -37,4 +31,53 @@ export function computeOutcome(
     )
     .join('. ');
   return { right: right.id, drops, sentence: `${sentence}.` };
+}
+
+/** After how many drops of a bottle a vessel's colour is one of these words; null where it is not within the most drops. */
+export function colourOfDrip(
+  bench: BenchSpec,
+  bottle: string,
+  vessel: string,
+  words: readonly string[],
+  most: number,
+): { drops: number | null } | { error: string } {
+  let state = createState(bench, { seed: 1 });
+  for (let n = 1; n <= most; n++) {
+    const outcome = apply(state, { kind: 'drip', from: bottle, into: vessel, drops: 1 });
+    if (!outcome.ok) return { error: outcome.refusal.sentence };
+    state = outcome.state;
+    const seen = read(state, { predicted: true }).vessels.find((one) => one.id === vessel)?.colour?.words;
+    if (seen !== undefined && words.includes(seen)) return { drops: n };
+  }
+  return { drops: null };
+}
+
+/**
+ * Which vessel has the lowest or highest pH before the first move, by the engine; 'together' where they agree to the
+ * displayed precision.
+ */
+export function compareOutcome(
+  bench: BenchSpec,
+  ask: { find: 'lowest-pH' | 'highest-pH'; of: readonly string[] },
+  options: readonly { id: string; first: string }[],
+): PredictionOutcome | { error: string } {
+  const { vessels } = createState(bench, { seed: 1 }).scene;
+  const sign = ask.find === 'lowest-pH' ? 1 : -1;
+  const read: { id: string; label: string; pH: number }[] = [];
+  for (const id of ask.of) {
+    const liquid = vessels[id]?.liquid;
+    if (!liquid) return { error: `This bench has no vessel '${id}'.` };
+    if (liquid.volume_nL === 0) return { error: `The vessel '${id}' is empty.` };
+    const label = bench.vessels.find((one) => one.id === id)!.label;
+    read.push({ id, label, pH: Math.round(solve(liquid, bench.model).pH * 100) / 100 });
+  }
+  read.sort((a, b) => sign * (a.pH - b.pH));
+  const first = read[0]!.pH === read[1]!.pH ? 'together' : read[0]!.id;
+  const right = options.find((option) => option.first === first);
+  if (!right) return { error: `The bench answers '${first}', but no option has 'first: ${first}'.` };
+  return {
+    right: right.id,
+    drops: [],
+    sentence: `${read.map(({ label, pH }) => `${label}: pH ${pH.toFixed(2)}`).join('. ')}.`,
+  };
 }

@@ -13,6 +13,10 @@ import remarkRehype from 'remark-rehype';
 import { unified } from 'unified';
 import { visit } from 'unist-util-visit';
 import { nearest } from './nearest.ts';
+import { FormulaError, type Mixture } from './mixture.ts';
+import { formatQuantity } from './format.ts';
+import type { RunScope } from './formula.ts';
+import { parseQuantity, valueOfQuantity, varies } from './quantity.ts';
 import type { Fault } from './types.ts';
 
 /** Boxes that prose may have: `:::caution` and `:::aside`. */
@@ -61,8 +65,10 @@ const schema = {
     'sub',
     'sup',
     'img',
+    'data',
   ],
   attributes: {
+    data: ['value', 'dataUnit', 'dataDigits', 'dataBy', 'dataFormula'],
     a: ['href'],
     img: ['src', 'alt'],
     aside: [['className', 'caution', 'aside']],
@@ -102,16 +108,20 @@ export function prepareProse(tree: Root, source: string, file: string): Fault[] 
     node: { position?: { start: { line: number; column: number } } | undefined },
     message: string,
     fix?: string,
+    found?: string,
   ) =>
     faults.push({
       file,
       line: node.position?.start.line ?? 1,
       column: node.position?.start.column ?? 1,
       message,
+      ...(found ? { found: found.slice(0, 60) } : {}),
       ...(fix ? { fix } : {}),
     });
   visit(tree, (node, index, parent) => {
-    if (node.type === 'html') fault(node, 'Raw HTML is not used in a lesson. Write it in Markdown.');
+    // One fault a line: a pair of tags is one mistake.
+    if (node.type === 'html' && !faults.some(({ line }) => line === node.position?.start.line))
+      fault(node, 'Raw HTML is not used in a lesson. Write it in Markdown.', undefined, node.value);
     if (node.type === 'heading' && node.depth === 1)
       fault(node, "The title stands in the front matter. Start the text's headings with two signs.", '## …');
     if (node.type === 'image') {
@@ -119,12 +129,13 @@ export function prepareProse(tree: Root, source: string, file: string): Fault[] 
         fault(
           node,
           'A picture has to stand beside the lesson; foreign addresses are not loaded.',
-          `![${node.alt ?? ''}](picture.png)`,
+          `![${node.alt || 'What it shows'}](picture.png)`,
+          node.url,
         );
       if (!node.alt) fault(node, 'Say in words what the picture shows.', `![What it shows](${node.url})`);
     }
     if (node.type === 'link' && /^(?!https:\/\/|mailto:|\/|#)/i.test(node.url))
-      fault(node, 'A link starts with https:// or with a / for a page of ours.');
+      fault(node, 'A link starts with https:// or with a / for a page of ours.', undefined, node.url);
     if ((node.type === 'textDirective' || node.type === 'leafDirective') && parent && index !== undefined) {
       const { start, end } = node.position!;
       const text = source.slice(start.offset, end.offset);
@@ -144,6 +155,7 @@ export function prepareProse(tree: Root, source: string, file: string): Fault[] 
             .map((name) => `:::${name}`)
             .join(', ')}.`,
           close ? `:::${close}` : undefined,
+          `:::${node.name}`,
         );
         return undefined;
       }
@@ -158,3 +170,43 @@ export function prepareProse(tree: Root, source: string, file: string): Fault[] 
   });
   return faults;
 }
+
+/**
+ * Turns inline code that starts with '=' into computed quantities, in place. What differs from learner to learner stays a
+ * formula, to be filled for each of them; the rest is computed now.
+ * @param fault told where a quantity is not understood or cannot be computed
+ */
+export function computeQuantities(
+  nodes: readonly RootContent[],
+  scope: RunScope,
+  fault: (place: { line: number; column: number }, error: FormulaError) => void,
+  mixture?: Mixture,
+): void {
+  visit({ type: 'root', children: [...nodes] } as Root, 'inlineCode', (node) => {
+    if (!/^=\s/.test(node.value)) return;
+    const place = node.position?.start ?? { line: 1, column: 1 };
+    try {
+      const source = node.value.slice(1).trim();
+      const quantity = parseQuantity(source, mixture);
+      const value = valueOfQuantity(quantity, scope);
+      const { unit, digits, by } = quantity.style;
+      const shown = formatQuantity(value, quantity.style);
+      Object.assign(node, {
+        type: 'quantity',
+        data: {
+          hName: 'data',
+          hProperties: varies(quantity)
+            ? { dataFormula: source }
+            : { value: String(value), dataUnit: unit, dataDigits: String(digits), dataBy: by },
+          hChildren: [{ type: 'text', value: varies(quantity) ? '' : shown }],
+        },
+      });
+    } catch (error) {
+      fault(place, asFormulaError(error));
+    }
+  });
+}
+
+/** Chemistry's and the bench's own refusals are told like ours. */
+export const asFormulaError = (error: unknown): FormulaError =>
+  error instanceof FormulaError ? error : new FormulaError((error as Error).message);

@@ -23,6 +23,8 @@ export const frontMatterSchema = z
       .default('en-GB'),
     model,
     access: z.enum(['open', 'members']).default('members'),
+    /** Compiled and rehearsed, but not published with the course. */
+    draft: z.boolean().default(false),
     minutes: z.number().int().min(1).max(180),
   })
   .strict();
@@ -230,15 +232,24 @@ export const predictionSchema = z
       .min(2)
       .max(6),
     observe: text(300),
-    outcome: z
-      .object({
-        /** The bottle that is dripped, and the vessels it goes into. */
-        drip: id,
-        into: z.array(id).min(2).max(4),
-        /** The change that is waited for: the vessel's colour in these words. */
-        until: z.array(text(40)).min(1).max(12),
-        most_drops: z.number().int().min(1).max(2000).default(500),
-      })
-      .strict(),
+    outcome: z.union([
+      z
+        .object({
+          /** The bottle that is dripped, and the vessels it goes into. */
+          drip: id,
+          into: z.array(id).min(2).max(4),
+          /** The change that is waited for: the vessel's colour in these words. */
+          until: z.array(text(40)).min(1).max(12),
+          most_drops: z.number().int().min(1).max(2000).default(500),
+        })
+        .strict(),
+      z
+        .object({
+          /** Compares vessels as they stand at the start: which has the lowest or highest pH. */
+          find: z.enum(['lowest-pH', 'highest-pH']),
+          of: z.array(id).min(2).max(8),
+        })
+        .strict(),
+    ]),
   })
   .strict();

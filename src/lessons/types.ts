@@ -1,4 +1,6 @@
-import type { BenchSpec, Model } from '../bench/index.ts';
+import type { BenchSpec, BenchState, Model } from '../bench/index.ts';
+import type { Conventions } from './format.ts';
+import type { Question, QuestionForLearner } from './questions/types.ts';
 
 /** A mistake in a lesson, told so that its author can mend it. Lines and columns start at 1. */
 export interface Fault {
@@ -6,6 +8,8 @@ export interface Fault {
   readonly line: number;
   readonly column: number;
   readonly message: string;
+  /** The words in the lesson that the fault is about. */
+  readonly found?: string;
   /** The nearest valid word or the corrected form, in the author's own syntax. */
   readonly fix?: string;
 }
@@ -26,9 +30,10 @@ export interface PredictionForLearner {
   readonly observe: string;
 }
 
-/** The outcome as the engine computes it: drops into each vessel until its pH has left the band. */
+/** The outcome as the engine computes it: drops until a colour shows in each vessel, or a quantity compared. */
 export interface PredictionOutcome {
   readonly right: string;
+  /** Empty where the prediction compares vessels as they stand. */
   readonly drops: readonly {
     readonly vessel: string;
     readonly label: string;
@@ -44,12 +49,19 @@ export interface Prediction extends PredictionForLearner {
 export type Block =
   | { readonly kind: 'prose'; readonly html: string }
   | { readonly kind: 'bench'; readonly spec: BenchSpec }
-  | { readonly kind: 'prediction'; readonly spec: Prediction };
+  | { readonly kind: 'prediction'; readonly spec: Prediction }
+  | { readonly kind: 'question'; readonly spec: Question };
+
+export type LearnerBlock =
+  | { readonly kind: 'prose'; readonly html: string }
+  | { readonly kind: 'bench'; readonly spec: BenchSpec; readonly prediction: string | null }
+  | { readonly kind: 'prediction'; readonly spec: PredictionForLearner }
+  | { readonly kind: 'question'; readonly spec: QuestionForLearner };
 
 /** One thing to do in a lesson; its id is what progress hangs on. */
 export interface Checkpoint {
   readonly id: string;
-  readonly kind: 'prediction' | 'aim';
+  readonly kind: 'prediction' | 'aim' | 'question';
   readonly title: string;
   /** Place in `blocks`. */
   readonly block: number;
@@ -63,6 +75,8 @@ export interface CompiledLesson {
   readonly lang: string;
   readonly model: Model;
   readonly access: 'open' | 'members';
+  /** Compiled and rehearsed, but not published with the shipped course. */
+  readonly draft: boolean;
   readonly minutes: number;
   readonly compilerVersion: number;
   readonly blocks: readonly Block[];
@@ -72,3 +86,12 @@ export interface CompiledLesson {
 export type Compiled =
   | { readonly ok: true; readonly lesson: CompiledLesson }
   | { readonly ok: false; readonly faults: readonly Fault[] };
+
+/** Whose lesson it is: what variants, shuffles and numbers hang on. */
+export interface Learner {
+  /** Whole number; equal for one person and lesson, whatever the device. */
+  readonly seed: number;
+  readonly conventions?: Conventions;
+  /** The learner's runs by bench, where a key is taken from them. */
+  readonly runs?: Readonly<Record<string, BenchState>>;
+}

@@ -1,7 +1,7 @@
 import { isMap, isSeq, LineCounter, parseDocument, type Document } from 'yaml';
 import type { z } from 'zod';
 import type { Fault } from './types.ts';
-import { nearest } from './nearest.ts';
+import { tellIssues } from './yamlFaults.ts';
 
 /** Where a piece of YAML stands in its file: the line before its first one. */
 export interface Place {
@@ -13,7 +13,10 @@ export interface Place {
 const LONGEST = 20_000;
 const DEEPEST = 12;
 
-type Read<T> = { ok: true; value: T } | { ok: false; faults: Fault[] };
+/** Where the value at a path of the block stands in the file. */
+export type Where = (...path: (string | number)[]) => { readonly line: number; readonly column: number };
+
+type Read<T> = { ok: true; value: T; where: Where } | { ok: false; faults: Fault[] };
 
 /** Parses and checks YAML; every fault names the line it stands in. Aliases are refused, so nothing can multiply. */
 export function readYaml<S extends z.ZodTypeAny>(
@@ -22,11 +25,12 @@ export function readYaml<S extends z.ZodTypeAny>(
   what: string,
   place: Place,
 ): Read<z.output<S>> {
-  const at = (line: number, column: number, message: string, fix?: string): Fault => ({
+  const at = (line: number, column: number, message: string, fix?: string, found?: string): Fault => ({
     file: place.file,
     line: place.lineBefore + line,
     column,
     message,
+    ...(found === undefined ? {} : { found }),
     ...(fix === undefined ? {} : { fix }),
   });
   if (text.length > LONGEST)
@@ -45,54 +49,44 @@ export function readYaml<S extends z.ZodTypeAny>(
     const { line, col } = lines.linePos(offset);
     return [Math.max(1, line), Math.max(1, col)] as const;
   };
-  if (document.errors.length > 0)
+  // One fault of syntax leads to others that are none: the first is told.
+  const [error] = document.errors;
+  if (error) {
+    const said = error.message.split('\n')[0]!.replace(/ at line \d+, column \d+:?$/, '');
+    return { ok: false, faults: [at(...where(error.pos[0]), `This ${what} is not right YAML: ${said}.`)] };
+  }
+  const alias = /(?:^|[\s[{,:-])([&*][A-Za-z0-9_-]+)/.exec(
+    text.replace(/"[^"]*"|'[^']*'/g, (quoted) => ' '.repeat(quoted.length)),
+  );
+  if (alias)
     return {
       ok: false,
-      faults: document.errors.map((error) =>
-        at(...where(error.pos[0]), `This ${what} is not right YAML: ${error.message.split('\n')[0]}`),
-      ),
-    };
-  if (/(^|[\s[{,:-])[&*][A-Za-z0-9_-]/.test(text.replace(/"[^"]*"|'[^']*'/g, '')))
-    return {
-      ok: false,
-      faults: [at(1, 1, `Anchors and aliases (& and *) are not used in a ${what}: write the value out.`)],
+      faults: [
+        at(
+          ...where(alias.index + alias[0].length - alias[1]!.length),
+          `Anchors and aliases (& and *) are not used in a ${what}: write the value out.`,
+          undefined,
+          alias[1],
+        ),
+      ],
     };
   if (depthOf(document.contents) > DEEPEST)
     return { ok: false, faults: [at(1, 1, `This ${what} is nested too deeply.`)] };
   const parsed = schema.safeParse(document.toJS({ maxAliasCount: 0 }));
-  if (parsed.success) return { ok: true, value: parsed.data as z.output<S> };
+  if (parsed.success)
+    return {
+      ok: true,
+      value: parsed.data as z.output<S>,
+      where: (...path) => {
+        const [line, column] = where(offsetOf(document, path));
+        return { line: place.lineBefore + line, column };
+      },
+    };
   return {
     ok: false,
-    faults: parsed.error.issues.flatMap((issue) => {
-      const [line, column] = where(offsetOf(document, issue.path));
-      const name = issue.path.join('.') || what;
-      if (issue.code === 'unrecognized_keys')
-        return issue.keys.map((key) => {
-          const [keyLine, keyColumn] = where(offsetOf(document, [...issue.path, key]));
-          const known = keysOf(schema, issue.path);
-          const close = nearest(key, known);
-          return at(
-            keyLine,
-            keyColumn,
-            `A ${what} has no '${key}'.${known.length ? ` It has: ${known.join(', ')}.` : ''}`,
-            close ? `${close}:` : undefined,
-          );
-        });
-      if (issue.code === 'invalid_enum_value') {
-        const close = nearest(String(issue.received), issue.options.map(String));
-        return [
-          at(
-            line,
-            column,
-            `'${name}' cannot be '${issue.received}'. It is one of: ${issue.options.join(', ')}.`,
-            close ? `${issue.path.at(-1)}: ${close}` : undefined,
-          ),
-        ];
-      }
-      if (issue.code === 'invalid_type' && issue.received === 'undefined')
-        return [at(line, column, `'${name}' is missing in this ${what}.`)];
-      return [at(line, column, `'${name}': ${issue.message}`)];
-    }),
+    faults: tellIssues(parsed.error.issues, schema, document.toJS({ maxAliasCount: 0 }), what).map(
+      ({ path, message, found, fix }) => at(...where(offsetOf(document, path)), message, fix, found),
+    ),
   };
 }
 
@@ -121,27 +115,4 @@ function offsetOf(document: Document, path: readonly (string | number)[]): numbe
     if (range) return range[0];
   }
   return 0;
-}
-
-/** Keys that the object at a path may have, as far as the schema tells. */
-function keysOf(schema: z.ZodTypeAny, path: readonly (string | number)[]): string[] {
-  let now = unwrap(schema);
-  for (const step of path) {
-    const definition = now._def as { shape?: () => Record<string, z.ZodTypeAny>; type?: z.ZodTypeAny };
-    const next = typeof step === 'number' ? definition.type : definition.shape?.()[step];
-    if (!next) return [];
-    now = unwrap(next);
-  }
-  const shape = (now._def as { shape?: () => Record<string, unknown> }).shape;
-  return shape ? Object.keys(shape()) : [];
-}
-
-function unwrap(schema: z.ZodTypeAny): z.ZodTypeAny {
-  let now = schema;
-  for (;;) {
-    const { innerType, schema: inner } = now._def as { innerType?: z.ZodTypeAny; schema?: z.ZodTypeAny };
-    if (innerType) now = innerType;
-    else if (inner) now = inner;
-    else return now;
-  }
 }

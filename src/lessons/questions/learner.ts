@@ -1,0 +1,57 @@
+import { unitName, USUAL } from '../format.ts';
+import { scopeOf } from '../scope.ts';
+import type { CompiledLesson, Learner } from '../types.ts';
+import { mixtureOf } from './tubes.ts';
+import type { Question, QuestionForLearner } from './types.ts';
+import { fillText, mixedUp, rightsOf, valuesFor } from './variants.ts';
+
+/** A question as a page may hold it: the learner's own values and order, without key, feedback or model answer. */
+export function questionForLearner(
+  lesson: CompiledLesson,
+  question: Question,
+  learner: Learner,
+): QuestionForLearner {
+  const conventions = learner.conventions ?? USUAL;
+  const mixture = question.kind === 'numeric' ? mixtureOf(question) : undefined;
+  const filler = (other: number) => {
+    const scope = scopeOf(lesson, valuesFor(question, learner.seed, other), learner);
+    return (html: string) => fillText(html, scope, conventions, mixture);
+  };
+  const fill = filler(0);
+  const base = { id: question.id, ask: fill(question.ask) };
+  const plain = ({ id, text }: { id: string; text: string }) => ({ id, text: fill(text) });
+  switch (question.kind) {
+    case 'choice':
+      return {
+        ...base,
+        kind: 'choice',
+        several: question.options.filter((option) => option.right).length > 1,
+        options: question.options.map(plain),
+      };
+    case 'numeric': {
+      const unit = unitName(question.unit, conventions);
+      const other = filler(1);
+      return {
+        ...base,
+        kind: 'numeric',
+        unit,
+        hint: `${question.digits} ${question.by === 'decimals' ? 'decimals' : 'significant figures'}`,
+        ...(question.help === 'example'
+          ? { example: { ask: other(question.ask), steps: question.steps.map(other) } }
+          : {}),
+        ...(question.help === 'faded' ? { steps: question.steps.slice(0, -1).map(fill) } : {}),
+      };
+    }
+    case 'order':
+      return { ...base, kind: 'order', items: mixedUp(question.items, learner.seed, question.id).map(plain) };
+    case 'match':
+      return {
+        ...base,
+        kind: 'match',
+        lefts: question.pairs.map(({ id, left }) => plain({ id, text: left })),
+        rights: rightsOf(question, learner.seed).map(plain),
+      };
+    case 'explain':
+      return { ...base, kind: 'explain' };
+  }
+}

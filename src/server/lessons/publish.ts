@@ -25,6 +25,7 @@ export type Published = {
 
 interface Current {
   id: number;
+  schoolId: number | null;
   revision: number;
   hash: string;
   compilerVersion: number;
@@ -42,17 +43,34 @@ export async function publishLesson(
   file: string,
   schoolId: number | null = null,
 ): Promise<Published> {
+  return store(compiled(markdown, file), markdown, file, schoolId);
+}
+
+function compiled(markdown: string, file: string): CompiledLesson {
   const result = compile(markdown, { file });
   if (!result.ok) throw new LessonFaults(result.faults);
-  const { lesson } = result;
+  return result.lesson;
+}
+
+function store(
+  lesson: CompiledLesson,
+  markdown: string,
+  file: string,
+  schoolId: number | null,
+): Promise<Published> {
   const hash = createHash('sha256').update(markdown).digest('hex');
   return withTransaction(async (transaction) => {
     const [current] = await sequelize.query<Current>(
-      `SELECT l.id, r.revision, r.markdown_hash AS hash, r.compiler_version AS compilerVersion, r.engine_version AS engineVersion, r.compiled
+      `SELECT l.id, l.school_id AS schoolId, r.revision, r.markdown_hash AS hash, r.compiler_version AS compilerVersion, r.engine_version AS engineVersion, r.compiled
          FROM lessons l JOIN lesson_revisions r ON r.lesson_id = l.id AND r.revision = l.current_revision
         WHERE l.slug = ? FOR UPDATE`,
       { replacements: [lesson.slug], type: QueryTypes.SELECT, transaction },
     );
+    // Nobody writes over the course or another school's lesson by choosing its name.
+    if (current && current.schoolId !== schoolId)
+      throw new LessonFaults([
+        { file, line: 1, column: 1, message: 'Another lesson has this file name.', found: file },
+      ]);
     const text = JSON.stringify(lesson);
     if (current?.hash === hash) {
       if (current.compilerVersion === COMPILER_VERSION && current.engineVersion === ENGINE_VERSION)
@@ -106,11 +124,14 @@ export async function publishLesson(
   });
 }
 
-/** Publishes the shipped course from its folder: what a deployment does. */
+/** Publishes the shipped course from its folder, without its drafts: what a deployment does. */
 export async function publishShippedCourse(folder: string): Promise<Published[]> {
   const files = (await readdir(folder)).filter((name) => name.endsWith('.md')).sort();
   const published: Published[] = [];
-  for (const name of files)
-    published.push(await publishLesson(await readFile(path.join(folder, name), 'utf8'), name));
+  for (const name of files) {
+    const markdown = await readFile(path.join(folder, name), 'utf8');
+    const lesson = compiled(markdown, name);
+    if (!lesson.draft) published.push(await store(lesson, markdown, name, null));
+  }
   return published;
 }

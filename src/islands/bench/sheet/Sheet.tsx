@@ -84,14 +84,16 @@ export function Sheet({ spec, run, vessel, asksServer }: Props) {
             ))}
           </div>
           <div className="sheet-views-row" data-equal>
-            <Suspense fallback={<p className="empty">Fetching the view</p>}>
-              {open.map((view) => {
-                if (view === 'pair-bar') return <PairBar key={view} pair={pair} />;
-                if (view === 'ledger')
-                  return <MoleLedger key={view} state={state} vessel={vessel} seen={seen} />;
-                return <SpeciesBars key={view} state={state} vessel={vessel} seen={seen} />;
-              })}
-            </Suspense>
+            {open.map((view) => {
+              if (view === 'pair-bar') return <PairBar key={view} pair={pair} />;
+              // Only what is fetched waits: a boundary around the rest would make the server send inline scripts.
+              const View = view === 'ledger' ? MoleLedger : SpeciesBars;
+              return (
+                <Suspense key={view} fallback={<p className="empty">Fetching the view</p>}>
+                  <View state={state} vessel={vessel} seen={seen} />
+                </Suspense>
+              );
+            })}
           </div>
         </div>
       )}

@@ -1,4 +1,4 @@
-import { useId, useState, type FormEvent } from 'react';
+import { useId, useState } from 'react';
 import { useStore } from 'zustand';
 import type { PredictionForLearner } from '../../lessons/types';
 import { workFor, type GivenWork, type Work } from '../bench/sync/work';
@@ -24,7 +24,7 @@ export function Prediction({ spec, given }: Props) {
   const [work] = useState(() => workFor(given));
   const { prediction, observed, outcome, moved, ready, word } = useStore(work.store);
   return (
-    <section className="prediction sheet" aria-labelledby={`${spec.id}-title`} id={spec.id}>
+    <section className="prediction porcelain" aria-labelledby={`${spec.id}-title`} id={spec.id}>
       <p className="tape tape-ink prediction-kind" id={`${spec.id}-title`}>
         Prediction
       </p>
@@ -101,7 +101,7 @@ function Lock({ spec, work, ready }: { spec: PredictionForLearner; work: Work; r
   const [answer, setAnswer] = useState('');
   const [sure, setSure] = useState(0);
   const [missing, setMissing] = useState<string | null>(null);
-  const submit = (event: FormEvent) => {
+  const submit = (event: { preventDefault(): void }) => {
     event.preventDefault();
     if (!answer) return setMissing('Choose one answer first.');
     if (!sure) return setMissing('Say how sure you are.');

@@ -13,7 +13,7 @@ const variant = new URLSearchParams(location.search).has('home') ? 'home' : 'les
 createRoot(document.getElementById('root')!).render(
   <StrictMode>
     <div className={`page-${variant}`}>
-      <Bench lesson="harness" spec={spec} signedIn={false} variant={variant}>
+      <Bench spec={spec} variant={variant}>
         {variant === 'home' ? (
           <p className="hero">
             Pour it.

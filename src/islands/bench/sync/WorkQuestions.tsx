@@ -55,7 +55,7 @@ export function WorkQuestions({ work, strangers, saving, word }: Props) {
 
 function Question({ title, children }: { title: string; children: React.ReactNode }) {
   return (
-    <section className="work-question sheet" role="alert" aria-label={title}>
+    <section className="work-question porcelain" role="alert" aria-label={title}>
       <h3>{title}</h3>
       {children}
     </section>

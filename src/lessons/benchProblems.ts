@@ -54,6 +54,26 @@ export function benchProblems(spec: BenchSpec): Told[] {
         );
     }
 
+  for (const [n, sample] of (spec.samples ?? []).entries()) {
+    for (const id of sample.into)
+      if (!things.includes(id))
+        unknown(
+          ['samples', n, 'into'],
+          id,
+          `The sample '${sample.id}' goes into '${id}', which this bench does not have.`,
+          things,
+        );
+    for (const [m, { parts }] of sample.contents.entries())
+      for (const { substance } of parts ?? [])
+        if (!findSubstance(substance))
+          unknown(
+            ['samples', n, 'contents', m],
+            substance,
+            `There is no substance '${substance}'.`,
+            substances.flatMap((one) => [one.formula, ...one.names]),
+          );
+  }
+
   for (const [n, aim] of spec.aims.entries()) {
     const at = (key: string): Told['path'] => ['aims', n, key];
     const named = [

@@ -98,7 +98,7 @@ export function compile(markdown: string, { file }: { file: string }): Compiled 
         if (id) faulty.add(id);
         continue;
       }
-      const spec = { ...read.value, model } as BenchSpec;
+      const spec: BenchSpec = { ...read.value, model };
       claim(spec.id, line);
       const problems = benchProblems(spec);
       for (const { path, message, fix, found } of problems) {

@@ -13,3 +13,5 @@ export {
 export { misconceptions } from './misconceptions.ts';
 export { AnswerError, mark, TELLING_ATTEMPT } from './questions/mark.ts';
 export type { Answer, Marking, Question, QuestionForLearner, QuestionKind, Tube } from './questions/types.ts';
+export { rehearseLesson, type Finding, type LessonRehearsal } from './rehearsal/rehearse.ts';
+export { tellFault, tellRehearsal } from './rehearsal/report.ts';

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { glassware } from '../bench/index.ts';
+import { glassware, listMoves, moves, type GlassId, type MoveKind } from '../bench/index.ts';
 
 /** The YAML of a lesson, one schema for each topic. Lines of content/README.md explain them to authors. */
 const id = z
@@ -9,7 +9,8 @@ const id = z
     'an id is small letters, digits and hyphens, starts with a letter and has at most 40 characters',
   );
 const text = (most: number) => z.string().trim().min(1).max(most);
-const glass = z.enum(Object.keys(glassware) as [string, ...string[]]);
+const glass = z.enum(Object.keys(glassware) as [GlassId, ...GlassId[]]);
+const moveKind = z.enum([...Object.keys(moves), ...Object.keys(listMoves)] as [MoveKind, ...MoveKind[]]);
 const model = z.enum(['textbook', 'real']);
 
 export const frontMatterSchema = z
@@ -143,7 +144,6 @@ const aim = z.discriminatedUnion('kind', [
       within: z.number().nonnegative(),
     })
     .strict(),
-  z.object({ ...aimBase, kind: z.literal('same-colour'), vessels: pairOf, within: bound }).strict(),
   z.object({ ...aimBase, kind: z.literal('calibrated') }).strict(),
   z.object({ ...aimBase, kind: z.literal('reading'), vessel: id, within_mL: z.number().positive() }).strict(),
   z
@@ -153,7 +153,7 @@ const aim = z.discriminatedUnion('kind', [
     .object({
       ...aimBase,
       kind: z.literal('did'),
-      move: text(30),
+      move: moveKind,
       vessel: id.optional(),
       times: z.number().int().positive().optional(),
     })
@@ -188,6 +188,25 @@ export const benchSchema = z
       .strict()
       .optional(),
     careful: z.boolean().optional(),
+    /** Contents dealt out anew for each run: unknown samples. */
+    samples: z
+      .array(
+        z
+          .object({
+            id,
+            into: z.array(id).min(1).max(12),
+            contents: z
+              .array(contents.extend({ name: text(60) }))
+              .min(1)
+              .max(12),
+            graded: z.boolean().optional(),
+          })
+          .strict(),
+      )
+      .max(4)
+      .optional(),
+    /** Moves offered, where not all that glass and shelf allow. */
+    moves: z.array(moveKind).min(1).optional(),
     hide: z
       .array(
         z

@@ -1,2 +1,2 @@
 export { listLessons, readLesson, readLessonById, type StoredLesson } from './read.ts';
-export { LessonFaults, publishLesson, publishShippedCourse, tellFault, type Published } from './publish.ts';
+export { LessonFaults, publishLesson, publishShippedCourse, type Published } from './publish.ts';

@@ -3,7 +3,13 @@ import { readdir, readFile } from 'node:fs/promises';
 import path from 'node:path';
 import { QueryTypes } from 'sequelize';
 import { ENGINE_VERSION } from '../../chemistry/index.ts';
-import { compile, COMPILER_VERSION, type CompiledLesson, type Fault } from '../../lessons/index.ts';
+import {
+  compile,
+  COMPILER_VERSION,
+  tellFault,
+  type CompiledLesson,
+  type Fault,
+} from '../../lessons/index.ts';
 import { sequelize, withTransaction } from '../database/index.ts';
 
 export class LessonFaults extends Error {
@@ -12,9 +18,6 @@ export class LessonFaults extends Error {
     this.name = 'LessonFaults';
   }
 }
-
-export const tellFault = (fault: Fault): string =>
-  `${fault.file}:${fault.line}:${fault.column} ${fault.message}${fault.fix ? ` Write: ${fault.fix}` : ''}`;
 
 export type Published = {
   slug: string;

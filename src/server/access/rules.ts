@@ -24,6 +24,7 @@ export const rules: Readonly<Record<string, Rule>> = {
   '/account/export': 'signed-in',
   '/accessibility': 'public',
   '/forgot': 'public',
+  '/how-the-numbers-are-made': 'public',
   '/lessons': 'public',
   '/lessons/[slug]': 'public',
   '/notebook': 'signed-in',

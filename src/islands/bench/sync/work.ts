@@ -70,6 +70,8 @@ const works = new Map<string, Work>();
 
 /** The work on one bench of this page; prediction and bench islands share it. Lives in browsers alone. */
 export function workFor(given: GivenWork): Work {
+  // On the server every rendering has its own: nothing of one person may be shown to another.
+  if (typeof window === 'undefined') return createWork(given);
   const key = `${given.lesson}/${given.bench}`;
   let work = works.get(key);
   if (!work) works.set(key, (work = createWork(given)));
@@ -108,7 +110,10 @@ export function createWork(given: GivenWork): Work {
   let sendingTo = 0;
   let retry_ms = FIRST_RETRY_MS;
   const listeners = new Set<Listener>();
-  const channel = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel('dropwise-runs');
+  const channel =
+    typeof window === 'undefined' || typeof BroadcastChannel === 'undefined'
+      ? null
+      : new BroadcastChannel('dropwise-runs');
 
   const store = createStore<WorkView>(() => ({
     ready: false,

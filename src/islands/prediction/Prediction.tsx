@@ -133,7 +133,7 @@ function Lock({ spec, work, ready }: { spec: PredictionForLearner; work: Work; r
         {missing}
       </p>
       <p className="prediction-row">
-        <button type="submit" className="button button-main" disabled={!ready}>
+        <button type="submit" className="action action-main" disabled={!ready}>
           Lock in my prediction
         </button>
         <span className="hint">Then the bench opens. A locked prediction stays as it is.</span>
@@ -179,7 +179,7 @@ function Observe({
         {missing && !answer ? 'Choose what you saw.' : word}
       </p>
       <p className="prediction-row">
-        <button type="submit" className="button button-main">
+        <button type="submit" className="action action-main">
           This is what I saw
         </button>
         <span className="hint">Finish your pour first: what you saw cannot be changed later.</span>

@@ -15,10 +15,10 @@ export function WorkQuestions({ work, strangers, saving, word }: Props) {
       <Question title="Is this your work?">
         <p>This browser holds work on this bench from before you signed in.</p>
         <Choices>
-          <button type="button" className="button button-main" onClick={() => void work.claim(true)}>
+          <button type="button" className="action action-main" onClick={() => void work.claim(true)}>
             Yes, take it over
           </button>
-          <button type="button" className="button" onClick={() => void work.claim(false)}>
+          <button type="button" className="action" onClick={() => void work.claim(false)}>
             No, clear it
           </button>
         </Choices>
@@ -29,10 +29,10 @@ export function WorkQuestions({ work, strangers, saving, word }: Props) {
       <Question title="This bench was worked on somewhere else, too">
         <p>Both lists are kept in your notebook. Which one do you want on this bench?</p>
         <Choices>
-          <button type="button" className="button button-main" onClick={() => void work.resolve('mine')}>
+          <button type="button" className="action action-main" onClick={() => void work.resolve('mine')}>
             What I see here
           </button>
-          <button type="button" className="button" onClick={() => void work.resolve('theirs')}>
+          <button type="button" className="action" onClick={() => void work.resolve('theirs')}>
             What was done elsewhere
           </button>
         </Choices>
@@ -44,7 +44,7 @@ export function WorkQuestions({ work, strangers, saving, word }: Props) {
       <Question title="This run is full">
         <p>A run holds 2,000 moves. It stays in your notebook; a new one begins with the bench as it was.</p>
         <Choices>
-          <button type="button" className="button button-main" onClick={() => work.beginAnew()}>
+          <button type="button" className="action action-main" onClick={() => work.beginAnew()}>
             Begin a new run
           </button>
         </Choices>

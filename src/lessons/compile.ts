@@ -4,7 +4,7 @@ import type { BenchSpec } from '../bench/index.ts';
 import { benchProblems } from './benchProblems.ts';
 import type { RunScope } from './formula.ts';
 import { tooMuch } from './limits.ts';
-import { compareOutcome, computeOutcome } from './outcome.ts';
+import { compareOutcome, computeOutcome, countOutcome } from './outcome.ts';
 import { nearest } from './nearest.ts';
 import { computeQuantities, parseMarkdown, prepareProse, renderProse } from './prose.ts';
 import { buildQuestion } from './questions/build.ts';
@@ -209,7 +209,12 @@ function predictionOf(
     return null;
   }
   const { outcome: ask, options, ...rest } = yaml;
-  const outcome = 'drip' in ask ? computeOutcome(bench, ask, options) : compareOutcome(bench, ask, options);
+  const outcome =
+    'drip' in ask
+      ? computeOutcome(bench, ask, options)
+      : 'find' in ask
+        ? compareOutcome(bench, ask, options)
+        : countOutcome(bench, ask, options);
   if ('error' in outcome) {
     add(line, 1, `The outcome of this prediction cannot be computed. ${outcome.error}`);
     return null;

@@ -2,6 +2,13 @@ import { solve } from '../chemistry/index.ts';
 import { apply, createState, read, type BenchSpec } from '../bench/index.ts';
 import type { PredictionOutcome } from './types.ts';
 
+/** What an option bets on: a vessel, 'together' or 'none'; or how many. */
+export interface Bet {
+  readonly id: string;
+  readonly first?: string;
+  readonly count?: number;
+}
+
 /**
  * What a prediction is about, found out by dripping: how many drops each vessel takes until its colour is one of the
  * words, or null within the most drops. Nothing of it is typed by an author.
@@ -10,7 +17,7 @@ import type { PredictionOutcome } from './types.ts';
 export function computeOutcome(
   bench: BenchSpec,
   ask: { drip: string; into: readonly string[]; until: readonly string[]; most_drops: number },
-  options: readonly { id: string; first: string }[],
+  options: readonly Bet[],
 ): PredictionOutcome | { error: string } {
   const drops: { vessel: string; label: string; drops: number | null }[] = [];
   for (const vessel of ask.into) {
@@ -59,7 +66,7 @@ export function colourOfDrip(
 export function compareOutcome(
   bench: BenchSpec,
   ask: { find: 'lowest-pH' | 'highest-pH'; of: readonly string[] },
-  options: readonly { id: string; first: string }[],
+  options: readonly Bet[],
 ): PredictionOutcome | { error: string } {
   const { vessels } = createState(bench, { seed: 1 }).scene;
   const sign = ask.find === 'lowest-pH' ? 1 : -1;
@@ -79,5 +86,29 @@ export function compareOutcome(
     right: right.id,
     drops: [],
     sentence: `${read.map(({ label, pH }) => `${label}: pH ${pH.toFixed(2)}`).join('. ')}.`,
+  };
+}
+
+/** How many vessels have one of these colours before the first move. */
+export function countOutcome(
+  bench: BenchSpec,
+  ask: { count: readonly string[]; of: readonly string[] },
+  options: readonly Bet[],
+): PredictionOutcome | { error: string } {
+  const { vessels } = read(createState(bench, { seed: 1 }), { predicted: true });
+  const seen: { label: string; words: string }[] = [];
+  for (const id of ask.of) {
+    const vessel = vessels.find((one) => one.id === id);
+    if (!vessel) return { error: `This bench has no vessel '${id}'.` };
+    if (!vessel.colour) return { error: `The vessel '${id}' shows no colour at the start.` };
+    seen.push({ label: vessel.label, words: vessel.colour.words });
+  }
+  const n = seen.filter(({ words }) => ask.count.includes(words)).length;
+  const right = options.find(({ count }) => count === n);
+  if (!right) return { error: `The bench answers ${n}, but no option has 'count: ${n}'.` };
+  return {
+    right: right.id,
+    drops: [],
+    sentence: `${seen.map(({ label, words }) => `${label}: ${words}`).join('. ')}.`,
   };
 }

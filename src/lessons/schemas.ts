@@ -247,7 +247,22 @@ export const predictionSchema = z
     bench: id,
     ask: text(400),
     options: z
-      .array(z.object({ id, text: text(200), first: id }).strict())
+      .array(
+        z
+          .object({
+            id,
+            text: text(200),
+            /** The vessel that this option bets on, or 'together' or 'none'. */
+            first: id.optional(),
+            /** Or the number of vessels, where the prediction counts. */
+            count: z.number().int().min(0).max(12).optional(),
+          })
+          .strict()
+          .refine(
+            ({ first, count }) => (first === undefined) !== (count === undefined),
+            "an option says 'first' and a vessel, or 'count' and a number",
+          ),
+      )
       .min(2)
       .max(6),
     observe: text(300),
@@ -267,6 +282,13 @@ export const predictionSchema = z
           /** Compares vessels as they stand at the start: which has the lowest or highest pH. */
           find: z.enum(['lowest-pH', 'highest-pH']),
           of: z.array(id).min(2).max(8),
+        })
+        .strict(),
+      z
+        .object({
+          /** Counts the vessels that have one of these colours at the start. */
+          count: z.array(text(40)).min(1).max(12),
+          of: z.array(id).min(2).max(12),
         })
         .strict(),
     ]),

@@ -50,6 +50,6 @@ function tells(text: string, labels: ReadonlySet<string>, right: ReadonlySet<str
   if (text.endsWith('?')) return false;
   const words = new Set(wordsIn(text).map(stem));
   const shared = [...right].filter((word) => words.has(word)).length;
-  if (right.size > 0 && shared / right.size >= SHARE) return true;
+  if (right.size > 1 && shared / right.size >= SHARE) return true;
   return HAPPENS.test(text) && [...labels].some((label) => label.length > 3 && words.has(label));
 }

@@ -49,7 +49,7 @@ const CASES: readonly (readonly [mistake: string, lesson: string, words: readonl
     'an American spelling',
     changed('kind: colour', 'kind: color'),
     [
-      "47:49 'aims[1].kind' cannot be 'color'. It is one of: pH, colour, volume, temperature, added, drops, ratio, equal, same-colour, calibrated, reading, waste-pH, did, used-at-most. Found: kind: color Write: kind: colour",
+      "47:49 'aims[1].kind' cannot be 'color'. It is one of: pH, colour, volume, temperature, added, drops, ratio, equal, calibrated, reading, waste-pH, did, used-at-most. Found: kind: color Write: kind: colour",
     ],
   ],
   [

@@ -3,7 +3,7 @@ import { scopeOf } from '../scope.ts';
 import type { CompiledLesson, Learner } from '../types.ts';
 import { mixtureOf } from './tubes.ts';
 import type { Question, QuestionForLearner } from './types.ts';
-import { fillText, mixedUp, rightsOf, valuesFor } from './variants.ts';
+import { fillText, itemsOf, rightsOf, valuesFor } from './variants.ts';
 
 /** A question as a page may hold it: the learner's own values and order, without key, feedback or model answer. */
 export function questionForLearner(
@@ -43,7 +43,7 @@ export function questionForLearner(
       };
     }
     case 'order':
-      return { ...base, kind: 'order', items: mixedUp(question.items, learner.seed, question.id).map(plain) };
+      return { ...base, kind: 'order', items: itemsOf(question, learner.seed).map(plain) };
     case 'match':
       return {
         ...base,

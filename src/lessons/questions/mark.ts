@@ -3,7 +3,7 @@ import { scopeOf } from '../scope.ts';
 import type { CompiledLesson, Learner } from '../types.ts';
 import { markNumeric } from './numeric.ts';
 import type { Answer, Marking, Question } from './types.ts';
-import { fillText, rightsOf, valuesFor } from './variants.ts';
+import { fillText, itemsOf, rightsOf, valuesFor } from './variants.ts';
 
 /** From this attempt on the key is told with the feedback. */
 export const TELLING_ATTEMPT = 3;
@@ -50,14 +50,10 @@ export function mark(
     }
     case 'order': {
       const { order } = answer as { order: readonly string[] };
-      const ids = question.items.map((item) => item.id);
-      if (
-        order.length !== ids.length ||
-        new Set(order).size !== ids.length ||
-        order.some((id) => !ids.includes(id))
-      )
+      const items = itemsOf(question, learner.seed);
+      if (new Set(order).size !== items.length || order.length !== items.length)
         throw new AnswerError('An order names every item once.');
-      const misplaced = order.filter((id, place) => ids[place] !== id);
+      const misplaced = order.filter((id, place) => known(items, id).item !== question.items[place]!.id);
       return placed(
         misplaced,
         question,

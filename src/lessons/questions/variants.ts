@@ -3,7 +3,7 @@ import { formatQuantity, type Conventions } from '../format.ts';
 import type { RunScope } from '../formula.ts';
 import type { Mixture } from '../mixture.ts';
 import { parseQuantity, valueOfQuantity } from '../quantity.ts';
-import type { Match, Question, Variants } from './types.ts';
+import type { Match, Order, Question, Variants } from './types.ts';
 import type { QuestionYaml } from './schema.ts';
 
 export const MOST_VARIANTS = 1000;
@@ -69,4 +69,16 @@ export function rightsOf(
     ...question.decoys.map(({ text }) => ({ pair: null, text })),
   ];
   return mixedUp(all, seed, question.id).map((one, place) => ({ ...one, id: `r${place + 1}` }));
+}
+
+/** The items of an order as this learner gets them. Here, too, an id is a place: authors count theirs in the right order. */
+export function itemsOf(
+  question: Order,
+  seed: number,
+): readonly { readonly id: string; readonly text: string; readonly item: string }[] {
+  return mixedUp(question.items, seed, question.id).map(({ id, text }, place) => ({
+    id: `i${place + 1}`,
+    text,
+    item: id,
+  }));
 }

@@ -12,7 +12,7 @@ import {
   type Question,
 } from '../../../src/lessons/index.ts';
 import { keyOf } from '../../../src/lessons/questions/numeric.ts';
-import { rightsOf, valuesFor } from '../../../src/lessons/questions/variants.ts';
+import { itemsOf, rightsOf, valuesFor } from '../../../src/lessons/questions/variants.ts';
 import { scopeOf } from '../../../src/lessons/scope.ts';
 
 const folder = new URL('../../../content/lessons/', import.meta.url);
@@ -38,7 +38,10 @@ function rightAnswer(lesson: CompiledLesson, question: Question, seed: number): 
       return { kind: 'numeric', typed: told.key! };
     }
     case 'order':
-      return { kind: 'order', order: question.items.map(({ id }) => id) };
+      return {
+        kind: 'order',
+        order: question.items.map(({ id }) => itemsOf(question, seed).find(({ item }) => item === id)!.id),
+      };
     case 'match': {
       const rights = rightsOf(question, seed);
       return {

@@ -131,17 +131,27 @@ kind: order
 ask: In which order?
 items: [{ id: one, text: 1 mol, }, { id: two, text: 2 mol }, { id: three, text: 3 mol }]
 feedback: By amount.`);
-  it('an order names what is misplaced, and is never shown solved', () => {
-    expect(give(order, { kind: 'order', order: ['one', 'three', 'two'] }).misplaced).toEqual([
-      'three',
-      'two',
-    ]);
-    expect(give(order, { kind: 'order', order: ['one', 'two', 'three'] }).verdict).toBe('right');
+  it('an order names what is misplaced, is never shown solved, and its ids tell nothing', () => {
     for (let seed = 1; seed <= 100; seed++) {
       const shown = forLearner(order.lesson, { seed }).at(-1)!;
       if (shown.kind !== 'question' || shown.spec.kind !== 'order') throw new Error('An order.');
-      expect(shown.spec.items.map(({ id }) => id)).not.toEqual(['one', 'two', 'three']);
+      const { items } = shown.spec;
+      expect(items.map(({ id }) => id)).toEqual(['i1', 'i2', 'i3']);
+      expect(items.map(({ text }) => text)).not.toEqual(['<p>1 mol</p>', '<p>2 mol</p>', '<p>3 mol</p>']);
+      const right = [1, 2, 3].map((n) => items.find(({ text }) => text.includes(`${n} mol`))!.id);
+      expect(give(order, { kind: 'order', order: right }, seed).verdict).toBe('right');
+      const [first, second, third] = right as [string, string, string];
+      expect(give(order, { kind: 'order', order: [first, third, second] }, seed).misplaced).toEqual([
+        third,
+        second,
+      ]);
     }
+    for (const wrong of [
+      ['i1', 'i2'],
+      ['i1', 'i1', 'i2'],
+      ['i1', 'i2', 'one'],
+    ])
+      expect(() => give(order, { kind: 'order', order: wrong })).toThrow();
   });
 
   const match = asked(`id: q

@@ -1,5 +1,5 @@
 /** The hand-held pH meter: what its electrode gives, what its display shows, and when that is to be doubted. */
-import { join, pHOf, take } from './liquid.ts';
+import { join, pHOf, sealed, take } from './liquid.ts';
 import { pHShown, shown } from './precision.ts';
 import { triangular, uniform } from './seed.ts';
 import type { BenchSpec, Probe, Scene } from './types.ts';
@@ -37,7 +37,7 @@ function atTip(at: At): number | null {
   if (!vessel || vessel.liquid.volume_nL === 0) return null;
   if (!probe.carried) return pHOf(vessel.liquid, at.spec.model);
   const around = take(vessel.liquid, Math.min(AROUND_TIP_NL, vessel.liquid.volume_nL)).taken;
-  return pHOf(join(probe.carried, around), at.spec.model);
+  return pHOf(join(probe.carried, sealed(around, at.spec.model)), at.spec.model);
 }
 
 /** What the uncalibrated electrode gives, two decimals. */

@@ -1,9 +1,9 @@
-import { solve } from './equilibrium';
-import { encode, linearFromXyz, mapToGamut } from './gamut';
+import { solve } from './equilibrium.ts';
+import { encode, linearFromXyz, mapToGamut } from './gamut.ts';
 import { indicatorData } from './indicatorData';
-import { WX, WY, WZ } from './observer';
-import { wordsFor } from './words';
-import type { Colour, Equilibrium, Model, Solution } from './types';
+import { WX, WY, WZ } from './observer.ts';
+import { wordsFor } from './words.ts';
+import type { Colour, Equilibrium, Model, Solution } from './types.ts';
 
 const table = new Map<string, Float64Array>();
 for (const [id, d] of Object.entries(indicatorData))

@@ -1,6 +1,7 @@
-export * from './types';
-export { ChemistryError } from './errors';
-export { solve } from './equilibrium';
-export { colour } from './colour';
-export { createSolution, water, indicatorStock, mix, take } from './solution';
-export { ENGINE_VERSION } from './version';
+export * from './types.ts';
+export { ChemistryError } from './errors.ts';
+export { carbonateOf, pHOf, solve } from './equilibrium.ts';
+export { bufferCapacity } from './capacity.ts';
+export { colour } from './colour.ts';
+export { createSolution, indicatorStock, mix, seal, take, water } from './solution.ts';
+export { ENGINE_VERSION } from './version.ts';

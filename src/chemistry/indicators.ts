@@ -1,5 +1,5 @@
-import type { AcidFamily } from './components';
-import { indicatorData } from './indicatorData';
+import { indicatorData } from './indicatorData.ts';
+import type { AcidFamily } from './families.ts';
 
 /** Indicators as acid families. ΔrH° of an indicator is not known well enough to be used: its pKa is taken as constant. */
 export const indicators: Readonly<Record<string, AcidFamily>> = Object.fromEntries(
@@ -7,6 +7,7 @@ export const indicators: Readonly<Record<string, AcidFamily>> = Object.fromEntri
     id,
     {
       id,
+      name: d.name,
       charge: d.charge,
       forms: d.forms.map((f) => `${id} ${f.name}`),
       steps: d.pKa.map((pKa) => ({ pKa, dH: 0, dCp: 0 })),

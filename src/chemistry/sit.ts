@@ -1,6 +1,6 @@
 /** Interaction coefficients of the specific ion interaction theory, kg/mol at 25 °C: ThermoChimie 12a (2023) as distributed with
  * USGS PHREEQC 3.8.9; those marked are from memory. A pair that is not listed counts as 0. */
-const epsilon: Readonly<Record<string, number>> = {
+export const interactionCoefficients: Readonly<Record<string, number>> = {
   'H+|Cl-': 0.12,
   'H+|NO3-': 0.07,
   'Na+|OH-': 0.04,
@@ -35,5 +35,5 @@ const epsilon: Readonly<Record<string, number>> = {
 /** ε(i, k) of two species by name, 0 where they are not a listed cation-anion pair. */
 export function sitEpsilon(a: string, za: number, b: string, zb: number): number {
   if (za * zb >= 0) return 0;
-  return epsilon[za > 0 ? `${a}|${b}` : `${b}|${a}`] ?? 0;
+  return interactionCoefficients[za > 0 ? `${a}|${b}` : `${b}|${a}`] ?? 0;
 }

@@ -1,6 +1,12 @@
-/** Water itself: density, static permittivity, ionization constant and the Debye-Hückel slope, 0 to 60 °C at 0.1 MPa. */
-
-const KELVIN = 273.15;
+/** Water itself: density, static permittivity, ionisation constant and the Debye-Hückel slope, 0 to 60 °C at 0.1 MPa. */
+import {
+  AVOGADRO,
+  BOLTZMANN,
+  ELECTRIC_CONSTANT,
+  ELEMENTARY_CHARGE,
+  KELVIN,
+  WATER_KG_PER_MOL,
+} from './constants.ts';
 
 /**
  * Density of air-free water, kg/L.
@@ -15,8 +21,9 @@ export function waterDensity(temperature_C: number): number {
 }
 
 /**
- * pKw on the molal scale, liquid water at 0.1 MPa.
+ * pKw on the molal scale, liquid water.
  * IAPWS R11-24, Revised Release on the Ionization Constant of H2O (2024), equation for the liquid (n = 6).
+ * @param density kg/L; that at 0.1 MPa where it is left out
  */
 export function pKw(temperature_C: number, density = waterDensity(temperature_C)): number {
   const T = temperature_C + KELVIN;
@@ -24,15 +31,43 @@ export function pKw(temperature_C: number, density = waterDensity(temperature_C)
   const q = density * Math.exp(-0.864671 + 8659.19 / T + (-22786.2 / (T * T)) * density ** (2 / 3));
   const gas = 0.61415 + 48251.33 / T + -67707.93 / (T * T) + 10102100 / (T * T * T);
   const bridge = (q / (q + 1)) * density * (0.642044 + -56.8534 / T + -0.375754 * density);
-  return -2 * n * (Math.log10(1 + q) - bridge) + gas + 2 * Math.log10(18.015268 / 1000);
+  return -2 * n * (Math.log10(1 + q) - bridge) + gas + 2 * Math.log10(WATER_KG_PER_MOL);
+}
+
+/** Coefficients N, exponents of density (i) and of temperature (j) of IAPWS R8-97, equation 2. */
+const N = [
+  0.978224486826, -0.957771379375, 0.237511794148, 0.714692244396, -0.298217036956, -0.108863472196,
+  0.0949327488264, -9.80469816509e-3, 1.6516763497e-5, 9.37359795772e-5, -1.2317921872e-10,
+];
+const I = [1, 1, 1, 2, 3, 3, 4, 5, 6, 7, 10];
+const J = [0.25, 1, 2.5, 1.5, 1.5, 2.5, 2, 2, 5, 0.5, 10];
+
+/**
+ * Static relative permittivity of water.
+ * IAPWS R8-97, Release on the Static Dielectric Constant of Ordinary Water Substance (1997), equations 1 to 5
+ * (coefficients from memory; checked against values computed from the release).
+ */
+export function permittivity(temperature_C: number, density = waterDensity(temperature_C)): number {
+  const T = temperature_C + KELVIN;
+  const rho = (density * 1000) / WATER_KG_PER_MOL;
+  const reduced = (density * 1000) / 322;
+  const tau = 647.096 / T;
+  let g = 1 + 1.96096504426e-3 * reduced * (T / 228 - 1) ** -1.2;
+  for (let k = 0; k < N.length; k++) g += N[k]! * reduced ** I[k]! * tau ** J[k]!;
+  const dipole = 6.138e-30;
+  const polarisability = 1.636e-40;
+  const A = (AVOGADRO * dipole ** 2 * rho * g) / (ELECTRIC_CONSTANT * BOLTZMANN * T);
+  const B = (AVOGADRO * polarisability * rho) / (3 * ELECTRIC_CONSTANT);
+  return (1 + A + 5 * B + Math.sqrt(9 + 2 * A + 18 * B + A * A + 10 * A * B + 9 * B * B)) / (4 - 4 * B);
 }
 
 /**
- * Debye-Hückel slope A, (kg/mol)^0.5, from density and permittivity.
- * Permittivity: Malmberg C.G., Maryott A.A., J. Res. NBS 56 (1956) 1.
+ * Debye-Hückel slope A in log10 γ = -A z² √I, (kg/mol)^0.5.
+ * Debye P., Hückel E., Phys. Z. 24 (1923) 185, with the permittivity of IAPWS R8-97.
  */
 export function debyeHuckelA(temperature_C: number): number {
-  const t = temperature_C;
-  const permittivity = 87.74 + t * (-0.40008 + t * (9.398e-4 - t * 1.41e-6));
-  return (1.8246e6 * Math.sqrt(waterDensity(t))) / (permittivity * (t + KELVIN)) ** 1.5;
+  const T = temperature_C + KELVIN;
+  const density = waterDensity(temperature_C) * 1000;
+  const bjerrum = ELEMENTARY_CHARGE ** 2 / (ELECTRIC_CONSTANT * permittivity(temperature_C) * BOLTZMANN * T);
+  return (Math.sqrt(2 * AVOGADRO * density) * bjerrum ** 1.5) / (8 * Math.PI * Math.LN10);
 }

@@ -1,4 +1,4 @@
-import { linearFromXyz, oklabFromLinear } from './gamut';
+import { linearFromXyz, oklabFromLinear } from './gamut.ts';
 
 /**
  * Hues in words by OKLCH angle. The angles are mean hues of the vivid, brilliant and strong centroids of the ISCC-NBS

@@ -2,7 +2,7 @@
 import { glassware } from '../glassware.ts';
 import { amountsHidden } from '../hiding.ts';
 import { join, pHOf, take } from '../liquid.ts';
-import { findSource, volumeOf, whole } from '../moves/hands.ts';
+import { findSource, settle, volumeOf, whole } from '../moves/hands.ts';
 import { situationOf } from '../apply.ts';
 import { pairsOf } from '../pairs.ts';
 import { mLShown, pHShown } from '../precision.ts';
@@ -48,7 +48,7 @@ export function roomLeft(state: BenchState, id: string, of: string, seen: Seen =
     .filter((p) => p.base_mmol / p.acid_mmol <= RATIO && p.acid_mmol / p.base_mmol <= RATIO)
     .sort((a, b) => Math.min(b.acid_mmol, b.base_mmol) - Math.min(a.acid_mmol, a.base_mmol))[0];
   if (!pair || Math.min(pair.acid_mmol, pair.base_mmol) < 1e-3) return null;
-  const after = (nL: number) => join(start, take(source.liquid, nL).taken);
+  const after = (nL: number) => settle(vessel, spec, join(start, take(source.liquid, nL).taken));
   const within = (nL: number): boolean => {
     const ratio = ratioOf(after(nL), state, pair.family, pair.acid);
     return ratio !== null && ratio <= RATIO && ratio >= 1 / RATIO;

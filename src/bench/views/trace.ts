@@ -3,7 +3,7 @@ import { lastStanding } from '../apply.ts';
 import { glassware, pathOf } from '../glassware.ts';
 import { isHidden, traceHidden } from '../hiding.ts';
 import { colourOf, join, pHOf, take } from '../liquid.ts';
-import { volumeOf, whole } from '../moves/hands.ts';
+import { settle, volumeOf, whole } from '../moves/hands.ts';
 import { mLShown, pHShown, shown } from '../precision.ts';
 import { probeReading } from '../read.ts';
 import type { BenchState, Seen, VesselSpec } from '../types.ts';
@@ -104,7 +104,7 @@ function computeBetween(
   const base = addedTo(before, spec.id);
   return Array.from({ length: STEPS - 1 }, (_, i) => {
     const part = Math.round((poured * (i + 1)) / STEPS);
-    const liquid = join(whole(start), take(source, part).taken);
+    const liquid = settle(start, spec, join(whole(start), take(source, part).taken));
     return [shown((base + part) / 1e6, 4), pHShown(pHOf(liquid, after.spec.model))] as const;
   });
 }

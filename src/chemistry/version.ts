@@ -1,2 +1,2 @@
 /** Raised whenever a number that somebody was shown could come out differently. Stored with every run. */
-export const ENGINE_VERSION = '1.1.0';
+export const ENGINE_VERSION = '1.2.0';

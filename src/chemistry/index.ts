@@ -4,4 +4,7 @@ export { carbonateOf, pHOf, solve } from './equilibrium.ts';
 export { bufferCapacity } from './capacity.ts';
 export { colour } from './colour.ts';
 export { createSolution, indicatorStock, mix, seal, take, water } from './solution.ts';
+export { mixedIndicators, mixedIndicatorStock, type MixedIndicator } from './mixedIndicators.ts';
+export { titrate, type Titration, type TitrationMark, type TitrationPoint } from './titration.ts';
+export { DROP_mL, dropsToChange, mixtureOfPH, type DropsFound, type PairFound } from './design.ts';
 export { ENGINE_VERSION } from './version.ts';

@@ -13,11 +13,13 @@ export class ChemistryError extends Error {
 /** A finite number within bounds, or a ChemistryError that names the field. */
 export function checked(field: string, value: unknown, what: string, least = 0, most = Infinity): number {
   if (typeof value !== 'number' || !Number.isFinite(value) || value < least || value > most)
-    throw new ChemistryError(
-      field,
-      `${field} is ${what}${least === 0 && most === Infinity ? ', 0 or more' : `, ${least} to ${most}`}; found ${describe(value)}.`,
-    );
+    throw new ChemistryError(field, `${field} is ${what}${rangeOf(least, most)}; found ${describe(value)}.`);
   return value;
+}
+
+function rangeOf(least: number, most: number): string {
+  if (most !== Infinity) return `, ${least} to ${most}`;
+  return least === Number.MIN_VALUE ? ' above 0' : `, ${least} or more`;
 }
 
 const describe = (value: unknown): string =>

@@ -20,7 +20,7 @@ export function programOf(name, program = name.replace(/^@[^/]+\//, '')) {
 export const CHECKS = [
   { name: 'format', command: [programOf('prettier'), '--check', '--log-level', 'warn', '.'] },
   { name: 'lint', command: [programOf('eslint'), '.', '--max-warnings', '0'] },
-  { name: 'types', command: [programOf('@astrojs/check', 'astro-check'), '--minimumSeverity', 'warning'] },
+  { name: 'types', command: [programOf('astro'), 'check', '--minimumSeverity', 'warning'] },
   { name: 'import rules', command: [programOf('dependency-cruiser', 'depcruise'), 'src', 'scripts'] },
 ];
 

@@ -9,6 +9,24 @@ export interface Conventions {
 
 export const USUAL: Conventions = { decimal: '.', concentration: 'mol/L', volume: 'mL' };
 
+/** Every way that can be chosen, the usual one first. */
+export const CONVENTIONS: { readonly [K in keyof Conventions]: readonly Conventions[K][] } = {
+  decimal: ['.', ','],
+  concentration: ['mol/L', 'mol dm⁻³', 'M'],
+  volume: ['mL', 'cm³'],
+};
+
+/** Conventions as they were stored; what is missing or unknown is as usual. */
+export function conventionsFrom(stored: Readonly<Record<string, unknown>> | null | undefined): Conventions {
+  const pick = <K extends keyof Conventions>(name: K): Conventions[K] =>
+    CONVENTIONS[name].find((one) => one === stored?.[name]) ?? USUAL[name];
+  return {
+    decimal: pick('decimal'),
+    concentration: pick('concentration'),
+    volume: pick('volume'),
+  };
+}
+
 /** How a computed quantity is written. */
 export interface NumberStyle {
   /** As authors write it: 'mol/L', 'mL', '%'; '' for a plain number such as a pH. */

@@ -2,6 +2,8 @@ export * from './types.ts';
 export { compile, COMPILER_VERSION, slugOf } from './compile.ts';
 export { forLearner } from './learner.ts';
 export {
+  CONVENTIONS,
+  conventionsFrom,
   formatNumber,
   formatProse,
   formatQuantity,

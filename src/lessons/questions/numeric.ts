@@ -3,7 +3,7 @@ import { evaluate, parseFormula, type RunScope } from '../formula.ts';
 import { formatQuantity, roundHalfAway, UNITS, type Conventions } from '../format.ts';
 import { readNumber } from '../numberInput.ts';
 import { mixtureOf, pourAnswer } from './tubes.ts';
-import type { Marking, Numeric, WrongNumber } from './types.ts';
+import type { Marking, Numeric, Tube, WrongNumber } from './types.ts';
 import { fillText } from './variants.ts';
 import { resultOf, wrongMethods, type MethodId, type WrongMethod } from './wrongMethods.ts';
 
@@ -125,10 +125,13 @@ export function markNumeric(
         : 'Not yet. Write down what is in the solution, in amounts, before you use a formula.',
     misconceptions: misconception ? [misconception] : [],
     ...(wrong ? { method: wrong.method } : {}),
-    ...(poured ? { poured: tell ? poured : { yours: poured.yours } } : {}),
+    ...(poured ? { poured: tell ? poured : { yours: poured.yours, asked: unlabelled(poured.asked) } } : {}),
     ...(tell ? told : {}),
   };
 }
+
+/** The asked-for tube before the key may be told: what the eye sees, and no number. */
+const unlabelled = (tube: Tube): Tube => ({ ...tube, label: 'Asked for', pH: null });
 
 export const escape = (text: string): string =>
   text.replace(/&/g, '&amp;').replace(/</g, '&lt;').replace(/>/g, '&gt;').replace(/"/g, '&quot;');

@@ -112,7 +112,8 @@ export type Answer =
 /** A tube as it is shown beside another one. */
 export interface Tube {
   readonly label: string;
-  readonly pH: number;
+  /** Null while it would tell the key. */
+  readonly pH: number | null;
   readonly words: string;
   readonly hex: string;
 }
@@ -127,8 +128,8 @@ export interface Marking {
   readonly misconceptions: readonly string[];
   /** Ids of the parts that do not stand where they belong. */
   readonly misplaced?: readonly string[];
-  /** The learner's answer, poured beside the asked-for one. The asked-for one only when the key may be told. */
-  readonly poured?: { readonly yours: Tube; readonly asked?: Tube };
+  /** The learner's answer, poured beside the asked-for one, which shows its colour alone until the key may be told. */
+  readonly poured?: { readonly yours: Tube; readonly asked: Tube };
   /** Told once the answer is right or was tried often enough. */
   readonly key?: string;
   readonly solution?: string;

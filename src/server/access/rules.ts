@@ -13,6 +13,7 @@ export const rules: Readonly<Record<string, Rule>> = {
   '/500': 'public',
   '/_actions/[...path]': 'public',
   '/account': 'signed-in',
+  '/api/answers': 'public',
   '/api/lessons/[slug]/progress': 'signed-in',
   '/api/observations': 'signed-in',
   '/api/outcomes': 'public',

@@ -23,6 +23,9 @@ export async function exportPerson(personId: number): Promise<Record<string, unk
     predictions: await all(
       'SELECT l.slug AS lesson, p.prediction, p.answer, p.confidence, p.observed, p.locked_at, p.observed_at FROM predictions p JOIN lessons l ON l.id = p.lesson_id WHERE p.person_id = :personId',
     ),
+    answers: await all(
+      'SELECT l.slug AS lesson, a.revision, a.question, a.attempt, a.answer, a.verdict, a.marking, a.at FROM answers a JOIN lessons l ON l.id = a.lesson_id WHERE a.person_id = :personId ORDER BY a.id',
+    ),
     metAims: await all(
       'SELECT l.slug AS lesson, a.aim, a.move_number, a.met_at FROM met_aims a JOIN lessons l ON l.id = a.lesson_id WHERE a.person_id = :personId',
     ),

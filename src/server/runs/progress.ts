@@ -1,6 +1,7 @@
 import { QueryTypes } from 'sequelize';
 import type { Move } from '../../bench/index.ts';
 import type { CompiledLesson } from '../../lessons/index.ts';
+import { answeredIn, answersOf, type StoredAnswer } from '../answers/stored.ts';
 import { sequelize } from '../database/index.ts';
 import type { StoredLesson } from '../lessons/index.ts';
 import { newestRuns } from './open.ts';
@@ -16,13 +17,15 @@ export interface Progress {
   }[];
   readonly predictions: readonly StoredPrediction[];
   readonly metAims: readonly string[];
+  /** The newest answer to each question. */
+  readonly answers: readonly StoredAnswer[];
   /** Ids of the checkpoints that count as done. */
   readonly done: readonly string[];
 }
 
-/** Where a person stands in a lesson: what they left on each bench, predicted and met. */
+/** Where a person stands in a lesson: what they left on each bench, predicted, answered and met. */
 export async function progressOf(personId: number, lesson: StoredLesson): Promise<Progress> {
-  const [runs, predictions, aims] = await Promise.all([
+  const [runs, predictions, aims, answers, answered] = await Promise.all([
     newestRuns(personId, lesson.id),
     predictionsOf(personId, lesson),
     sequelize.query<{ aim: string }>(
@@ -32,6 +35,8 @@ export async function progressOf(personId: number, lesson: StoredLesson): Promis
         type: QueryTypes.SELECT,
       },
     ),
+    answersOf(personId, lesson),
+    answeredIn(personId, lesson.id),
   ]);
   const metAims = aims.map((row) => row.aim);
   // Only runs of the revision that is shown are taken up again; a bench that changed starts anew and the old run stays.
@@ -46,10 +51,12 @@ export async function progressOf(personId: number, lesson: StoredLesson): Promis
     })),
     predictions,
     metAims,
+    answers,
     done: doneIn(
       lesson.lesson,
       predictions.map((one) => one.prediction),
       metAims,
+      answered,
     ),
   };
 }
@@ -59,8 +66,9 @@ export function doneIn(
   lesson: CompiledLesson,
   predictions: readonly string[],
   metAims: readonly string[],
+  answered: readonly string[],
 ): string[] {
-  const done = new Set([...predictions, ...metAims]);
+  const done = new Set([...predictions, ...metAims, ...answered]);
   return lesson.checkpoints
     .filter((checkpoint) => done.has(checkpoint.id))
     .map((checkpoint) => checkpoint.id);

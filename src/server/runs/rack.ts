@@ -27,7 +27,8 @@ export async function rackOf(
     const [checkpoints, runs] = await Promise.all([
       sequelize.query<{ lessonId: number; id: string }>(
         `SELECT lesson_id AS lessonId, prediction AS id FROM predictions WHERE person_id = :personId
-         UNION ALL SELECT lesson_id, aim FROM met_aims WHERE person_id = :personId`,
+         UNION ALL SELECT lesson_id, aim FROM met_aims WHERE person_id = :personId
+         UNION ALL SELECT DISTINCT lesson_id, question FROM answers WHERE person_id = :personId AND verdict = 'right'`,
         { replacements, type: QueryTypes.SELECT },
       ),
       sequelize.query<{ lessonId: number; words: string; hex: string; pH: number | null }>(

@@ -45,8 +45,22 @@ export function BenchScene(props: Props) {
   const where = useRef({ ids: [] as string[], wished: into });
   where.current = { ids: vessels.map((vessel) => vessel.id), wished: into };
 
+  const reach = (id: string) => {
+    dispatch({ kind: 'move', over: id });
+    props.onInto(id);
+    props.say(`Over ${nameOf(id)}`);
+  };
+  const reachNow = useRef(reach);
+  useEffect(() => {
+    reachNow.current = reach;
+  });
+
   const getter = useMemo(
-    () => betweenVessels(() => ({ ...where.current, over: target(hands.current()) })),
+    () =>
+      betweenVessels(
+        () => ({ ...where.current, over: target(hands.current()) }),
+        (id) => reachNow.current(id),
+      ),
     // The hand's own reader never changes during a bench's life.
     // eslint-disable-next-line react-hooks/exhaustive-deps
     [],
@@ -97,12 +111,10 @@ export function BenchScene(props: Props) {
         props.say(`Picked up ${nameOf(id)}`);
       }}
       onDragOver={(event) => {
-        const id = event.over === null ? null : String(event.over.id);
-        dispatch({ kind: 'move', over: id });
-        if (id !== null) {
-          props.onInto(id);
-          props.say(`Over ${nameOf(id)}`);
-        }
+        // By keys the arrow itself has said which vessel it is.
+        if (event.activatorEvent instanceof KeyboardEvent) return;
+        if (event.over === null) dispatch({ kind: 'move', over: null });
+        else reach(String(event.over.id));
       }}
       onDragEnd={() => {
         dispatch({ kind: 'drop' });

@@ -27,15 +27,19 @@ export function nextTarget(
 /**
  * Arrow keys carry the bottle from one named vessel to the next, in reading order, instead of by pixels.
  * @param now where the bottle is, and which vessel the sentence names
+ * @param reach told the vessel that the bottle is over now. Keys say which one it is: what the page's layout does
+ * meanwhile (it scrolls, the notebook grows) takes no bottle away.
  */
 export function betweenVessels(
   now: () => { ids: readonly string[]; over: string | null; wished: string },
+  reach: (id: string) => void,
 ): KeyboardCoordinateGetter {
   return (event, { context }) => {
     const { ids, over, wished } = now();
     const next = nextTarget(ids, over, wished, event.code);
     if (next === null) return undefined;
     event.preventDefault();
+    reach(next);
     const target = context.droppableRects.get(next);
     const carried = context.collisionRect;
     if (!target || !carried) return undefined;

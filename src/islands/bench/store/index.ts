@@ -14,7 +14,7 @@ import type { BenchSpec, BenchState, Move, Seen } from '../../../bench/types.ts'
 import { delivery } from '../apron/deeds';
 import type { RunStore, RunView } from '../run';
 import { tellDone } from '../sync/done';
-import type { Work } from '../sync/work';
+import type { Work, WorkView } from '../sync/work';
 
 const PREDICT_FIRST = {
   code: 'predict-first',
@@ -27,16 +27,16 @@ const PREDICT_FIRST = {
  * @param work absent where nothing is kept: the home page's bench
  */
 export function createBenchStore({ spec, work }: { spec: BenchSpec; work?: Work | undefined }): RunStore {
-  const seed = work?.seed() ?? 1;
   const needsPrediction = work?.given.prediction != null;
-  const start = (): BenchState => {
-    const moves = work?.moves() ?? [];
-    return moves.length > 0 ? replay(spec, work!.seed(), moves).state : createState(spec, { seed });
-  };
-  const first = start();
+  const begin = (seed: number, moves: readonly Move[]): BenchState =>
+    moves.length > 0 ? replay(spec, seed, moves).state : createState(spec, { seed });
+  // As the server drew it. What this browser keeps of its own comes after: the page then becomes alive without a break.
+  const given = work?.given;
+  const first = begin(given?.run?.seed ?? work?.seed() ?? 1, given?.run?.moves ?? []);
   let pour: { readonly from: string; readonly into: string } | null = null;
+  let catchUp = (): void => undefined;
 
-  return createStore<RunView>()((set, get) => {
+  const store = createStore<RunView>()((set, get) => {
     const seen = (): Seen => ({ predicted: get().predicted === true, metAims: get().locallyMet });
     const settle = (state: BenchState) => {
       const { locallyMet } = get();
@@ -66,19 +66,17 @@ export function createBenchStore({ spec, work }: { spec: BenchSpec; work?: Work 
     };
 
     if (work) {
-      work.listen({
-        load: () => {
-          const state = start();
-          pour = null;
-          fixed = true;
-          const met = [...work.store.getState().metAims, ...judgeRun(state).map(({ id }) => id)];
-          set({ locallyMet: [...new Set(met)] });
-          settle(state);
-          tellDone(met);
-        },
-      });
-      work.store.subscribe(({ saving, metAims, prediction, word }) => {
-        const predicted = prediction !== null;
+      const load = () => {
+        const state = begin(work.seed(), work.moves());
+        pour = null;
+        fixed = true;
+        const met = [...work.store.getState().metAims, ...judgeRun(state).map(({ id }) => id)];
+        set({ locallyMet: [...new Set(met)] });
+        settle(state);
+        tellDone(met);
+      };
+      const follow = ({ saving, metAims, prediction, word }: WorkView) => {
+        const predicted = !needsPrediction || prediction !== null;
         const now = get();
         set({
           saving,
@@ -90,11 +88,17 @@ export function createBenchStore({ spec, work }: { spec: BenchSpec; work?: Work 
             : { refusal: undefined, readings: read(now.state, { ...seen(), predicted }) }),
           ...(word ? { refusal: { code: 'not-offered' as const, sentence: word } } : {}),
         });
-      });
+      };
+      work.listen({ load });
+      work.store.subscribe(follow);
+      catchUp = () => {
+        if (!work.store.getState().ready) return;
+        follow(work.store.getState());
+        load();
+      };
     }
-    const begin = work?.store.getState();
-    const metAims = begin?.metAims ?? [];
-    const predicted = !needsPrediction || begin?.prediction != null;
+    const metAims = given?.metAims ?? [];
+    const predicted = !needsPrediction || given?.locked !== undefined;
     return {
       state: first,
       readings: read(first, { predicted, metAims }),
@@ -102,7 +106,7 @@ export function createBenchStore({ spec, work }: { spec: BenchSpec; work?: Work 
       metAims,
       locallyMet: metAims,
       predicted,
-      saving: begin?.saving ?? 'local',
+      saving: given?.person != null ? 'saved' : 'local',
       act,
       startPour: (from, into) => {
         if (needsPrediction && !get().predicted) return set({ refusal: PREDICT_FIRST });
@@ -139,4 +143,6 @@ export function createBenchStore({ spec, work }: { spec: BenchSpec; work?: Work 
       startAgain: () => act({ kind: 'startAgain' }),
     };
   });
+  catchUp();
+  return store;
 }

@@ -11,7 +11,12 @@ export default defineConfig({
     projects: [
       {
         resolve,
-        test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], setupFiles: [console] },
+        test: {
+          name: 'unit',
+          include: ['tests/unit/**/*.test.{ts,tsx}'],
+          setupFiles: [console],
+          testTimeout: 60_000,
+        },
       },
       {
         resolve,

@@ -134,7 +134,13 @@ test('answers to what is not there are refused with a reason and leave nothing',
   });
   await expect(give('which', typed('3'))).rejects.toMatchObject({ problem: { status: 422 } });
   expect(await stored()).toEqual([]);
-  const sent = { lesson: 'two-beakers', question: 'which', opId: randomUUID(), answer: chosen('both') };
+  const sent = {
+    lesson: 'two-beakers',
+    question: 'which',
+    opId: randomUUID(),
+    person: null,
+    answer: chosen('both'),
+  };
   expect(answerShape.safeParse(sent).success).toBe(true);
   for (const broken of [
     { ...sent, opId: 'x' },

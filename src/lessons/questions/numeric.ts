@@ -121,13 +121,20 @@ export function markNumeric(
     feedback: wrong
       ? fillText(wrong.feedback ?? escape(library!.feedback), scope, conventions, mixtureOf(question))
       : poured
-        ? 'Not yet. We poured your answer: compare the two tubes.'
-        : 'Not yet. Write down what is in the solution, in amounts, before you use a formula.',
+        ? compared(poured)
+        : 'Write down what is in the solution, in amounts, before you use a formula.',
     misconceptions: misconception ? [misconception] : [],
     ...(wrong ? { method: wrong.method } : {}),
     ...(poured ? { poured: tell ? poured : { yours: poured.yours, asked: unlabelled(poured.asked) } } : {}),
     ...(tell ? told : {}),
   };
+}
+
+/** An answer that no wrong method explains: its tube says on which side it is. */
+function compared({ yours, asked }: { readonly yours: Tube; readonly asked: Tube }): string {
+  const far = Math.round(((yours.pH ?? 0) - (asked.pH ?? 0)) * 100);
+  if (far === 0) return 'The two tubes look alike. Work with more digits, and round at the end.';
+  return `Your tube is ${far < 0 ? 'more' : 'less'} acidic than the one that is asked for. What has to change?`;
 }
 
 /** The asked-for tube before the key may be told: what the eye sees, and no number. */

@@ -35,6 +35,8 @@ export const answerShape = z
     question: id,
     /** Made by the sender for each answer: the same answer sent again counts once. */
     opId: uuid,
+    /** Whom the sender takes itself to be signed in as. */
+    person: uuid.nullable(),
     answer: answer.transform((given) => given as Answer),
     /** For people without an account, whose attempts are counted in their browser. */
     attempt: z.number().int().min(1).max(1000).default(1),

@@ -10,9 +10,11 @@ const MOST_MB = 300;
 /** Compiles within bounds of time and memory. */
 function bounded(markdown: string) {
   const before = process.memoryUsage().heapUsed;
-  const start = performance.now();
+  // Time of this process's own work: a busy machine makes no lesson hostile.
+  const start = process.cpuUsage();
   const result = compile(markdown, { file });
-  expect(performance.now() - start).toBeLessThan(MOST_MS);
+  const { user, system } = process.cpuUsage(start);
+  expect((user + system) / 1000).toBeLessThan(MOST_MS);
   expect((process.memoryUsage().heapUsed - before) / 1e6).toBeLessThan(MOST_MB);
   return result;
 }

@@ -36,7 +36,7 @@ async function ask<T>(path: string, init: RequestInit): Promise<T> {
   throw new Refused(problem ?? { status: response.status, code: 'unknown', title: 'The server said no.' });
 }
 
-const post = <T>(path: string, body: unknown, keepalive = false) =>
+export const post = <T>(path: string, body: unknown, keepalive = false) =>
   ask<T>(path, {
     method: 'POST',
     headers: { 'Content-Type': 'application/json' },

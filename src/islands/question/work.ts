@@ -1,0 +1,174 @@
+import { createStore, type StoreApi } from 'zustand/vanilla';
+import type { Answer, Marking } from '../../lessons/questions/types';
+import { tellDone } from '../bench/sync/done';
+import { post, Refused, Unreachable } from '../bench/sync/server';
+import { keepQuestion, keyOf, loadQuestion, type MarkedAnswer, type Pending } from './local';
+
+const FIRST_RETRY_MS = 1000;
+const LONGEST_RETRY_MS = 30_000;
+/** A draft is written down once the hand rests. */
+const REST_MS = 300;
+
+/** What a page was given by the server about this question. */
+export interface GivenQuestion {
+  readonly lesson: string;
+  readonly revision: number;
+  readonly question: string;
+  /** Public id of the person who is signed in. */
+  readonly person: string | null;
+  readonly marked?: MarkedAnswer;
+  readonly done: boolean;
+}
+
+export interface QuestionView {
+  readonly draft: Answer | null;
+  /** 'waiting': not connected; the answer is kept and sent again. */
+  readonly phase: 'open' | 'sending' | 'waiting';
+  readonly marked: MarkedAnswer | null;
+  /** What was asked back about the last answer, which does not count. */
+  readonly askedBack: Marking | null;
+  readonly done: boolean;
+  /** A sentence that has to be read: why an answer was not taken. */
+  readonly word: string | null;
+}
+
+export interface QuestionWork {
+  readonly store: StoreApi<QuestionView>;
+  edit(draft: Answer): void;
+  submit(answer: Answer): void;
+  /** Changes one's mind about an answer that could not be sent yet. */
+  takeBack(): void;
+  start(): () => void;
+}
+
+interface Marked {
+  readonly attempt: number;
+  readonly marking: Marking;
+  readonly done: boolean;
+}
+
+/** The work on one question: its draft is kept, its answer sent until the server has it, its marking shown. */
+export function createQuestionWork(given: GivenQuestion): QuestionWork {
+  const { lesson, revision, question, person } = given;
+  const key = keyOf(person, lesson, question);
+  let pending: Pending | null = null;
+  let retry_ms = FIRST_RETRY_MS;
+  let timer: ReturnType<typeof setTimeout> | undefined;
+  let resting: ReturnType<typeof setTimeout> | undefined;
+  let touched = false;
+
+  const store = createStore<QuestionView>(() => ({
+    draft: given.marked?.answer ?? null,
+    phase: 'open',
+    marked: given.marked ?? null,
+    askedBack: null,
+    done: given.done,
+    word: null,
+  }));
+  const show = (part: Partial<QuestionView>) => store.setState(part);
+  const keep = () => {
+    clearTimeout(resting);
+    const { draft, marked, done } = store.getState();
+    void keepQuestion(key, { revision, draft, pending, marked: person === null ? marked : null, done });
+  };
+
+  async function load(): Promise<void> {
+    const found = await loadQuestion(key);
+    if (!found || touched) return;
+    // Another revision may ask for something else: what was said to the old one does not stand below it.
+    const same = found.revision === revision;
+    pending = same ? found.pending : null;
+    show({
+      ...(found.draft ? { draft: found.draft } : {}),
+      ...(person === null ? { done: found.done, marked: same ? found.marked : null } : {}),
+    });
+    if (store.getState().done) tellDone([question]);
+    if (pending) void send();
+  }
+
+  async function send(): Promise<void> {
+    const sent = pending;
+    if (!sent || store.getState().phase === 'sending') return;
+    clearTimeout(timer);
+    show({ phase: 'sending', word: null });
+    try {
+      const { attempt, marking, done } = await post<Marked>('/api/answers', {
+        lesson,
+        question,
+        person,
+        ...sent,
+      });
+      if (pending !== sent) return;
+      pending = null;
+      retry_ms = FIRST_RETRY_MS;
+      if (marking.verdict === 'ask') show({ phase: 'open', askedBack: marking });
+      else
+        show({
+          phase: 'open',
+          askedBack: null,
+          marked: { answer: sent.answer, marking, attempt },
+          // A visitor's browser keeps what is done; a wrong answer later takes nothing back.
+          done: done || store.getState().done,
+        });
+      if (store.getState().done) tellDone([question]);
+      keep();
+    } catch (error) {
+      if (pending !== sent) return;
+      if (error instanceof Unreachable) {
+        show({ phase: 'waiting' });
+        timer = setTimeout(() => void send(), retry_ms);
+        retry_ms = Math.min(LONGEST_RETRY_MS, retry_ms * 2);
+      } else if (error instanceof Refused) {
+        // Signed out meanwhile: the answer stays here and goes when its person is back.
+        if (error.problem.status !== 401) pending = null;
+        show({ phase: 'open', word: error.problem.title });
+        keep();
+      } else throw error;
+    }
+  }
+
+  return {
+    store,
+    edit(draft) {
+      touched = true;
+      show({ draft });
+      clearTimeout(resting);
+      resting = setTimeout(keep, REST_MS);
+    },
+    submit(answer) {
+      if (store.getState().phase !== 'open') return;
+      touched = true;
+      const attempt = (store.getState().marked?.attempt ?? 0) + 1;
+      pending = { opId: crypto.randomUUID(), answer, attempt };
+      show({ draft: answer, askedBack: null, word: null });
+      keep();
+      void send();
+    },
+    takeBack() {
+      clearTimeout(timer);
+      pending = null;
+      retry_ms = FIRST_RETRY_MS;
+      show({ phase: 'open', word: null });
+      keep();
+    },
+    start() {
+      const online = () => {
+        if (pending) void send();
+      };
+      const leave = () => {
+        if (touched) keep();
+      };
+      window.addEventListener('online', online);
+      window.addEventListener('pagehide', leave);
+      document.addEventListener('visibilitychange', leave);
+      void load();
+      return () => {
+        clearTimeout(timer);
+        leave();
+        window.removeEventListener('online', online);
+        window.removeEventListener('pagehide', leave);
+        document.removeEventListener('visibilitychange', leave);
+      };
+    },
+  };
+}

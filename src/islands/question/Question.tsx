@@ -3,7 +3,7 @@ import { useStore } from 'zustand';
 import type { Answer, QuestionForLearner } from '../../lessons/questions/types';
 import '../bench/bench.css';
 import { useLiveRegion } from '../bench/words/LiveRegion';
-import { draftFor, stillMisplaced } from './drafts';
+import { draftFor, stillMisplaced, typedBefore } from './drafts';
 import { Feedback } from './Feedback';
 import { Html } from './Html';
 import { Choice } from './kinds/Choice';
@@ -29,10 +29,15 @@ interface Props {
 
 /** A question: answered here, marked by the server, and never answered with right or wrong alone. */
 export function Question({ spec, given }: Props) {
+  // Read while the server's form still stands: its fields are about to be taken over.
+  const [before] = useState(() => (given.marked ? null : typedBefore(spec)));
   const [work] = useState(() => createQuestionWork(given));
   const view = useStore(work.store);
   const [say, live] = useLiveRegion();
-  useEffect(() => work.start(), [work]);
+  useEffect(() => {
+    if (before) work.edit(before);
+    return work.start();
+  }, [work, before]);
   const { marked, askedBack, phase, word } = view;
   const draft = draftFor(spec, view.draft);
   const answered = marked?.marking.verdict === 'right';

@@ -59,3 +59,30 @@ export function stillMisplaced(
     }),
   );
 }
+
+/** What a form of the page holds that was filled in before its script had come; null where nothing was. */
+export function typedBefore(spec: QuestionForLearner): Answer | null {
+  const form =
+    typeof document === 'undefined' ? null : document.querySelector(`#${CSS.escape(spec.id)} form`);
+  if (!(form instanceof HTMLFormElement)) return null;
+  const fields = new FormData(form);
+  const answers = fields.getAll('answer').map(String).filter(Boolean);
+  if (spec.kind === 'match') {
+    const matched = spec.lefts.flatMap(({ id }) => {
+      const right = fields.get(`answer-${id}`);
+      return right ? [[id, String(right)] as const] : [];
+    });
+    return matched.length > 0 ? { kind: 'match', matched: Object.fromEntries(matched) } : null;
+  }
+  if (answers.length === 0) return null;
+  switch (spec.kind) {
+    case 'choice':
+      return { kind: 'choice', chosen: answers };
+    case 'numeric':
+      return { kind: 'numeric', typed: answers[0]! };
+    case 'explain':
+      return { kind: 'explain', text: answers[0]! };
+    default:
+      return null;
+  }
+}

@@ -74,12 +74,12 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
 
   async function load(): Promise<void> {
     const found = await loadQuestion(key);
-    if (!found || touched) return;
+    if (!found) return;
     // Another revision may ask for something else: what was said to the old one does not stand below it.
     const same = found.revision === revision;
-    pending = same ? found.pending : null;
+    pending ??= same ? found.pending : null;
     show({
-      ...(found.draft ? { draft: found.draft } : {}),
+      ...(found.draft && !touched ? { draft: found.draft } : {}),
       ...(person === null ? { done: found.done, marked: same ? found.marked : null } : {}),
     });
     if (store.getState().done) tellDone([question]);

@@ -24,6 +24,7 @@ export const rules: Readonly<Record<string, Rule>> = {
   '/api/takeover': 'signed-in',
   '/account/export': 'signed-in',
   '/accessibility': 'public',
+  '/closed/[slug]': 'public',
   '/forgot': 'public',
   '/how-the-numbers-are-made': 'public',
   '/lessons': 'public',

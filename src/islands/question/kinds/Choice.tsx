@@ -1,4 +1,3 @@
-import { useId } from 'react';
 import type { Answer } from '../../../lessons/questions/types';
 import type { SpecOf } from '../drafts';
 import { Html } from '../Html';
@@ -13,7 +12,6 @@ interface Props {
 
 /** One answer of several, or as many as are right. */
 export function Choice({ spec, draft, labelledBy, fixed, onDraft }: Props) {
-  const name = useId();
   const toggle = (id: string) => {
     if (fixed) return;
     const chosen = spec.several
@@ -41,7 +39,7 @@ export function Choice({ spec, draft, labelledBy, fixed, onDraft }: Props) {
           >
             <input
               type={spec.several ? 'checkbox' : 'radio'}
-              name={name}
+              name="answer"
               value={option.id}
               checked={chosen}
               aria-disabled={fixed || undefined}

@@ -31,6 +31,7 @@ export function Explain({ draft, labelledBy, fixed, marking, askedBack, onDraft 
       </label>
       <textarea
         id={id}
+        name="answer"
         className="field question-text"
         rows={4}
         maxLength={MOST}

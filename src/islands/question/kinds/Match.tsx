@@ -48,7 +48,7 @@ export function Match({ spec, draft, fixed, misplaced, onDraft }: Props) {
               >
                 <input
                   type="radio"
-                  name={`${name}-${left.id}`}
+                  name={`answer-${left.id}`}
                   value={right.id}
                   checked={draft.matched[left.id] === right.id}
                   aria-disabled={fixed || undefined}

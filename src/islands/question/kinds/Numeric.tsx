@@ -38,6 +38,7 @@ export function Numeric({ spec, draft, labelledBy, fixed, askedBack, onDraft }: 
         <input
           id={id}
           className="field"
+          name="answer"
           type="text"
           inputMode={spec.unit === '' ? 'decimal' : 'text'}
           autoComplete="off"

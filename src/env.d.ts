@@ -10,5 +10,7 @@ declare namespace App {
     requestId: string;
     /** The client's address, as the front determined it. */
     clientAddress: string;
+    /** What a form that came with this request held, without secrets: shown again where it was not accepted. */
+    typed: Readonly<Record<string, string>>;
   }
 }

@@ -5,6 +5,26 @@ import { log } from './server/log.ts';
 import { problemResponse } from './server/problem.ts';
 import { COOKIE, readSession } from './server/sign-in/sessions.ts';
 
+const SECRET_FIELDS = new Set(['password', 'current', 'token']);
+
+/** A form's fields are read from a copy: the action reads the request itself. */
+async function typedInto(request: Request): Promise<Record<string, string>> {
+  const isForm = /^(multipart\/form-data|application\/x-www-form-urlencoded)/i.test(
+    request.headers.get('content-type') ?? '',
+  );
+  if (request.method !== 'POST' || !isForm) return {};
+  const fields = await request
+    .clone()
+    .formData()
+    .catch(() => new FormData());
+  return Object.fromEntries(
+    [...fields].filter((entry): entry is [string, string] => {
+      const [name, value] = entry;
+      return typeof value === 'string' && !SECRET_FIELDS.has(name);
+    }),
+  );
+}
+
 /**
  * Who is asking, and may they? Decided by the route's pattern, which Astro keeps canonical, and closed unless a rule
  * opens it. Signed-in answers are never stored by anyone.
@@ -47,6 +67,7 @@ export const onRequest = defineMiddleware(async (context, next) => {
     if (typeof rule === 'object' && !(locals.standing && hasRole(locals.standing, rule.role)))
       return deny(403);
   }
+  locals.typed = isApi ? {} : await typedInto(context.request);
   const response = await next();
   if (person) response.headers.set('Cache-Control', 'no-store');
   return response;

@@ -1,6 +1,6 @@
 // The main job on the open lesson: predict, drip acid into water and into a buffer, say what was seen, find it again.
 import type { CDPSession, Locator, Page } from '@playwright/test';
-import { newPerson, signIn, signUp } from './people.ts';
+import { awake, newPerson, signIn, signUp } from './people.ts';
 import { expect, test } from './test.ts';
 
 const LESSON = '/lessons/meeting-a-buffer';
@@ -26,8 +26,8 @@ async function middle(target: Locator): Promise<{ x: number; y: number }> {
 /** Waits until the islands of the lesson answer. */
 async function openLesson(page: Page): Promise<void> {
   await page.goto(LESSON);
-  await page.locator('.prediction').scrollIntoViewIfNeeded();
-  await page.locator('.bench').scrollIntoViewIfNeeded();
+  await awake(page, '.prediction');
+  await awake(page, '.bench');
   await expect(pH(page, 1)).toHaveText('4.76');
 }
 
@@ -44,9 +44,9 @@ async function expectSameElsewhere(page: Page, other: Page, person: ReturnType<t
   const here = [await pH(page, 0).innerText(), await pH(page, 1).innerText()];
   const count = await lines(page).count();
   await signIn(other, person, LESSON);
-  await other.locator('.prediction').scrollIntoViewIfNeeded();
+  await awake(other, '.prediction');
   await expectComparison(other);
-  await other.locator('.bench').scrollIntoViewIfNeeded();
+  await awake(other, '.bench');
   await expect(pH(other, 0)).toHaveText(here[0]!);
   await expect(pH(other, 1)).toHaveText(here[1]!);
   await expect(lines(other)).toHaveCount(count);
@@ -206,8 +206,8 @@ test.describe('by touch', () => {
     const person = newPerson('Jonas Reedmace');
     await signUp(page, mailTo, person);
     await signIn(page, person, LESSON);
-    await page.locator('.prediction').scrollIntoViewIfNeeded();
-    await page.locator('.bench').scrollIntoViewIfNeeded();
+    await awake(page, '.prediction');
+    await awake(page, '.bench');
     await page.getByRole('button', { name: 'Yes, take it over' }).tap();
     await expect(pH(page, 0)).toHaveText(left);
     await expect(aim(page, 'water-yellow')).toHaveAttribute('data-state', 'met');

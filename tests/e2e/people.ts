@@ -49,3 +49,9 @@ export async function signIn(page: Page, person: TestPerson, next = '/lessons'):
   await page.getByRole('button', { name: 'Sign in' }).click();
   await page.waitForURL((url) => url.pathname === next);
 }
+
+/** Scrolls to it and waits until its island has come alive: a press before that is nobody's. */
+export async function awake(page: Page, selector: string): Promise<void> {
+  await page.locator(selector).scrollIntoViewIfNeeded();
+  await expect(page.locator(`astro-island[ssr]:has(${selector})`)).toHaveCount(0);
+}

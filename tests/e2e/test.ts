@@ -14,8 +14,8 @@ interface Fixtures {
   /** Console messages that this test expects; any other fails it. */
   expectedConsole: RegExp[];
   silence: void;
-  /** Waits for the newest mail to this address. */
-  mailTo: (address: string) => Promise<Mail>;
+  /** Waits for the newest mail to this address, of this subject where one is given. */
+  mailTo: (address: string, subject?: string) => Promise<Mail>;
   /** Fails where axe finds anything against WCAG 2.2 AA. */
   expectAccessible: () => Promise<void>;
 }
@@ -36,7 +36,7 @@ export const test = base.extend<Fixtures>({
   ],
   mailTo: async ({ request }, use) => {
     const { mailPagePort } = JSON.parse(await readFile(`${DATA_FOLDER}/demo.json`, 'utf8'));
-    await use(async (address) => {
+    await use(async (address, subject) => {
       let newest: Mail | undefined;
       await expect
         .poll(
@@ -44,7 +44,7 @@ export const test = base.extend<Fixtures>({
             const answer = await request.get(`http://127.0.0.1:${mailPagePort}/mails.json`, {
               params: { to: address },
             });
-            [newest] = (await answer.json()) as Mail[];
+            newest = ((await answer.json()) as Mail[]).find((mail) => !subject || mail.subject === subject);
             return newest;
           },
           { timeout: 15_000, message: `a mail to ${address}` },

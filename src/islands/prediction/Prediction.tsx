@@ -1,4 +1,4 @@
-import { useId, useState } from 'react';
+import { useState } from 'react';
 import { useStore } from 'zustand';
 import type { PredictionForLearner } from '../../lessons/types';
 import { workFor, type GivenWork, type Work } from '../bench/sync/work';
@@ -71,60 +71,45 @@ function Answer({ label, text, note }: { label: string; text: string; note?: str
   );
 }
 
-function Options({
-  spec,
-  name,
-  value,
-  onValue,
-}: {
-  spec: PredictionForLearner;
-  name: string;
-  value: string;
-  onValue: (value: string) => void;
-}) {
+/**
+ * The browser itself keeps what is chosen, and the form is read when it is sent: a choice made before the page has come
+ * alive counts, too.
+ */
+function Options({ spec }: { spec: PredictionForLearner }) {
   return spec.options.map((option) => (
-    <label key={option.id} className="prediction-option" data-chosen={value === option.id || undefined}>
-      <input
-        type="radio"
-        name={name}
-        value={option.id}
-        checked={value === option.id}
-        onChange={() => onValue(option.id)}
-      />
+    <label key={option.id} className="prediction-option">
+      <input type="radio" name="answer" value={option.id} />
       <span>{option.text}</span>
     </label>
   ));
 }
 
+const chosenIn = (form: HTMLFormElement, name: string): string => String(new FormData(form).get(name) ?? '');
+
 function Lock({ spec, work, ready }: { spec: PredictionForLearner; work: Work; ready: boolean }) {
-  const name = useId();
-  const [answer, setAnswer] = useState('');
-  const [sure, setSure] = useState(0);
   const [missing, setMissing] = useState<string | null>(null);
-  const submit = (event: { preventDefault(): void }) => {
-    event.preventDefault();
-    if (!answer) return setMissing('Choose one answer first.');
-    if (!sure) return setMissing('Say how sure you are.');
-    work.lock(answer, sure);
-    return undefined;
-  };
   return (
-    <form onSubmit={submit} noValidate>
+    <form
+      noValidate
+      onChange={() => setMissing(null)}
+      onSubmit={(event) => {
+        event.preventDefault();
+        const answer = chosenIn(event.currentTarget, 'answer');
+        const sure = Number(chosenIn(event.currentTarget, 'sure'));
+        if (!answer) setMissing('Choose one answer first.');
+        else if (!sure) setMissing('Say how sure you are.');
+        else work.lock(answer, sure);
+      }}
+    >
       <fieldset>
         <legend className="sr-only">{spec.ask}</legend>
-        <Options spec={spec} name={`${name}-answer`} value={answer} onValue={setAnswer} />
+        <Options spec={spec} />
       </fieldset>
       <fieldset className="prediction-sure">
         <legend>How sure are you?</legend>
         {SURE.map(([n, words]) => (
-          <label key={n} className="prediction-option prediction-small" data-chosen={sure === n || undefined}>
-            <input
-              type="radio"
-              name={`${name}-sure`}
-              value={n}
-              checked={sure === n}
-              onChange={() => setSure(n)}
-            />
+          <label key={n} className="prediction-option prediction-small">
+            <input type="radio" name="sure" value={n} />
             <span>{words}</span>
           </label>
         ))}
@@ -153,8 +138,6 @@ function Observe({
   moved: boolean;
   word: string | null;
 }) {
-  const name = useId();
-  const [answer, setAnswer] = useState('');
   const [missing, setMissing] = useState(false);
   if (!moved)
     return (
@@ -164,19 +147,21 @@ function Observe({
     );
   return (
     <form
+      noValidate
+      onChange={() => setMissing(false)}
       onSubmit={(event) => {
         event.preventDefault();
+        const answer = chosenIn(event.currentTarget, 'answer');
         if (answer) work.observe(answer);
         else setMissing(true);
       }}
-      noValidate
     >
       <fieldset>
         <legend className="prediction-observe">{spec.observe}</legend>
-        <Options spec={spec} name={`${name}-seen`} value={answer} onValue={setAnswer} />
+        <Options spec={spec} />
       </fieldset>
       <p role="alert" className="fault">
-        {missing && !answer ? 'Choose what you saw.' : word}
+        {missing ? 'Choose what you saw.' : word}
       </p>
       <p className="prediction-row">
         <button type="submit" className="action action-main">

@@ -129,9 +129,11 @@ export function createWork(given: GivenWork): Work {
   const show = (part: Partial<WorkView>) => store.setState(part);
   const unsent = () => record.ops.length - record.confirmed > 0 || record.prediction?.sent === false;
 
+  /** The last writing to the browser's own storage. */
+  let kept: Promise<unknown> = Promise.resolve();
   const write = (next: Partial<WorkRecord>) => {
     record = { ...record, ...next, at: Date.now() };
-    void keepWork(lesson, bench, record);
+    kept = keepWork(lesson, bench, record);
   };
   const reload = () => {
     for (const listener of listeners)
@@ -143,6 +145,8 @@ export function createWork(given: GivenWork): Work {
   };
   const plan = (ms: number) => {
     if (person === null) return;
+    // 'Saved' is said of nothing that still waits.
+    if (unsent() && store.getState().saving === 'saved') show({ saving: 'saving' });
     clearTimeout(timer);
     timer = setTimeout(() => void flush(), ms);
   };
@@ -210,7 +214,8 @@ export function createWork(given: GivenWork): Work {
         channel?.postMessage({ runId: record.runId, count: record.confirmed });
       }
       retry_ms = FIRST_RETRY_MS;
-      show({ saving: 'saved' });
+      await kept;
+      show({ saving: unsent() ? 'saving' : 'saved' });
     } catch (error) {
       if (error instanceof Unreachable) {
         show({ saving: 'offline' });
@@ -222,7 +227,7 @@ export function createWork(given: GivenWork): Work {
       sending = false;
       sendingTo = 0;
     }
-    if (unsent() && store.getState().saving === 'saved') plan(0);
+    if (unsent() && ['saved', 'saving'].includes(store.getState().saving)) plan(0);
   }
 
   function onRefusal({ problem }: Refused): void {

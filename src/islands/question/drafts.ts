@@ -62,9 +62,10 @@ export function stillMisplaced(
 
 /** What a form of the page holds that was filled in before its script had come; null where nothing was. */
 export function typedBefore(spec: QuestionForLearner): Answer | null {
-  const form =
-    typeof document === 'undefined' ? null : document.querySelector(`#${CSS.escape(spec.id)} form`);
-  if (!(form instanceof HTMLFormElement)) return null;
+  // The server renders islands, too, and has no document.
+  if (typeof document === 'undefined') return null;
+  const form = document.querySelector<HTMLFormElement>(`#${CSS.escape(spec.id)} form`);
+  if (!form) return null;
   const fields = new FormData(form);
   const answers = fields.getAll('answer').map(String).filter(Boolean);
   if (spec.kind === 'match') {

@@ -3,6 +3,7 @@ import { hasRole, standingOf } from './server/access/memberships.ts';
 import { ruleFor } from './server/access/rules.ts';
 import { log } from './server/log.ts';
 import { problemResponse } from './server/problem.ts';
+import { wholePage } from './server/whole-page.ts';
 import { COOKIE, readSession } from './server/sign-in/sessions.ts';
 
 const SECRET_FIELDS = new Set(['password', 'current', 'token']);
@@ -68,7 +69,9 @@ export const onRequest = defineMiddleware(async (context, next) => {
       return deny(403);
   }
   locals.typed = isApi ? {} : await typedInto(context.request);
-  const response = await next();
+  const response = await wholePage(await next(), (error) =>
+    log.error({ requestId: locals.requestId, routePattern, err: error }, 'a page could not be made'),
+  );
   if (person) response.headers.set('Cache-Control', 'no-store');
   return response;
 });

@@ -15,6 +15,8 @@ export const CARBONIC = 'carbonic';
 export interface CompiledSystem {
   readonly system: ChemicalSystem;
   readonly model: Model;
+  /** True where carbon dioxide follows from a gas. */
+  readonly open: boolean;
   /** Component ids in the order of the solution's amounts, and where each one's total stands in the system. */
   readonly ids: readonly string[];
   readonly slots: Int32Array;
@@ -88,7 +90,19 @@ function compile(ids: readonly string[], open: boolean, model: Model, activity: 
     pairs,
   );
   system.activity = activity;
-  return { system, model, ids, slots, families, names, components, temperature_C: NaN, density: 1, henry: 0 };
+  return {
+    system,
+    model,
+    open,
+    ids,
+    slots,
+    families,
+    names,
+    components,
+    temperature_C: NaN,
+    density: 1,
+    henry: 0,
+  };
 }
 
 /** Sets the constants of a temperature; the textbook knows 25 °C alone. */
@@ -116,18 +130,24 @@ const caches: Record<string, Map<string, CompiledSystem>> = {
   davies: new Map(),
 };
 
+/** The system of the last solve for each kind of activity: a titration asks for the same one again and again. */
+const newest: Record<string, CompiledSystem | undefined> = {};
+
+/** True where a system has just these components, in this order, under this model. */
+function fits(compiled: CompiledSystem, { amounts }: Solution, open: boolean, model: Model): boolean {
+  if (compiled.open !== open || compiled.model !== model) return false;
+  const { ids } = compiled;
+  let i = 0;
+  for (const id in amounts) if (ids[i++] !== id) return false;
+  return i === ids.length;
+}
+
 /** The compiled system of a solution's components, with the constants of its temperature. */
 function systemOf(solution: Solution, model: Model, activity: Activity): CompiledSystem {
   const open = solution.gas !== undefined;
-  let key = open ? 'open' : model === 'real' && activity === 'none' ? 'ideal' : '';
-  for (const id in solution.amounts) key += `|${id}`;
-  const cache = caches[activity]!;
-  let compiled = cache.get(key);
-  if (!compiled) {
-    compiled = compile(Object.keys(solution.amounts), open, model, activity);
-    if (cache.size >= KEPT) cache.clear();
-    cache.set(key, compiled);
-  }
+  const last = newest[activity];
+  const compiled = last && fits(last, solution, open, model) ? last : kept(solution, open, model, activity);
+  newest[activity] = compiled;
   const temperature_C = model === 'real' ? solution.temperature_C : 25;
   if (compiled.temperature_C !== temperature_C) {
     if (!(temperature_C >= TEMPERATURES_C.from && temperature_C <= TEMPERATURES_C.to))
@@ -136,6 +156,20 @@ function systemOf(solution: Solution, model: Model, activity: Activity): Compile
         `The constants hold from ${TEMPERATURES_C.from} to ${TEMPERATURES_C.to} °C; found ${temperature_C} °C.`,
       );
     warm(compiled, temperature_C);
+  }
+  return compiled;
+}
+
+/** From the cache, or compiled and kept there. */
+function kept(solution: Solution, open: boolean, model: Model, activity: Activity): CompiledSystem {
+  let key = open ? 'open' : model === 'real' && activity === 'none' ? 'ideal' : '';
+  for (const id in solution.amounts) key += `|${id}`;
+  const cache = caches[activity]!;
+  let compiled = cache.get(key);
+  if (!compiled) {
+    compiled = compile(Object.keys(solution.amounts), open, model, activity);
+    if (cache.size >= KEPT) cache.clear();
+    cache.set(key, compiled);
   }
   return compiled;
 }

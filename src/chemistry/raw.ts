@@ -102,7 +102,8 @@ export function solveRaw(problem: RawProblem): RawAnswer {
     activityOf(problem.activity),
     problem.activity === 'davies' ? checked('debyeHuckelA', problem.debyeHuckelA, 'a slope', 0, 5) : 0,
   );
-  const pH = solveInPlace(system);
+  solveInPlace(system);
+  const { pH } = system;
   const names = [
     'H+',
     'OH-',

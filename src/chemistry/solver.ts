@@ -14,24 +14,44 @@ import type { ChemicalSystem } from './system.ts';
 const LEAST = -20 * LN10;
 const MOST = 6 * LN10;
 const FIRST_GUESS = -7 * LN10;
-const EXACT = 1e-13;
+/**
+ * What may be left of ln a(H+) and of ln γ. A step of Newton's leaves about its own square, and a renewal of the activity
+ * coefficients moves the answer by a hundredth of itself, so that the answer is good to 1e-11.
+ */
+const LAST_STEP = 1e-6;
+const LAST_CHANGE = 1e-10;
 const ROUNDS = 600;
 
-/** Results of `charges`, kept outside so that a trial allocates nothing. */
-let positive = 0;
-let negative = 0;
-let positiveSlope = 0;
-let negativeSlope = 0;
+/**
+ * What the steps of a solve hand to one another. Numbers in a typed array cost nothing; numbers handed over as arguments, results
+ * or variables of the module are objects on the heap, a new one for each.
+ */
+const w = new Float64Array(10);
+/** In: activity and molality of H3O+, molality of OH-, net molality of strong ions' charges. */
+const A = 0;
+const H = 1;
+const OH = 2;
+const STRONG = 3;
+/** Out: sums of positive and negative charges, and their derivatives by ln a(H+). */
+const POSITIVE = 4;
+const NEGATIVE = 5;
+const POSITIVE_SLOPE = 6;
+const NEGATIVE_SLOPE = 7;
+/** In and out: what part of a change of ln γ is made; the greatest one. */
+const WEIGHT = 8;
+const CHANGE = 9;
 
 /** Sums of charges at a(H+) and their derivatives by ln a(H+). */
-function charges(s: ChemicalSystem, a: number, h: number, oh: number, strong: number): void {
-  positive = h;
-  positiveSlope = h;
-  negative = oh;
-  negativeSlope = -oh;
+function charges(s: ChemicalSystem): void {
+  const strong = w[STRONG]!;
+  let positive = w[H]!;
+  let positiveSlope = positive;
+  let negative = w[OH]!;
+  let negativeSlope = -negative;
   if (strong > 0) positive += strong;
   else negative -= strong;
   const { first, steps, firstStep, mixed, open, totals, gasMolality, charges: z } = s;
+  const inverse = 1 / w[A]!;
   for (let f = 0; f < first.length; f++) {
     const n = steps[f]!;
     const z0 = z[first[f]!]!;
@@ -40,21 +60,40 @@ function charges(s: ChemicalSystem, a: number, h: number, oh: number, strong: nu
     let term = 1;
     let sum = 1;
     let mean = 0;
-    let up = z0 > 0 ? z0 : 0;
-    let upFirst = 0;
-    let down = z0 < 0 ? -z0 : 0;
-    let downFirst = 0;
-    for (let k = 1; k <= n; k++) {
-      term *= mixed[k0 + k - 1]! / a;
-      sum += term;
-      mean += k * term;
-      const charge = z0 - k;
-      if (charge > 0) {
-        up += charge * term;
-        upFirst += charge * k * term;
-      } else {
-        down -= charge * term;
-        downFirst -= charge * k * term;
+    let up: number;
+    let upFirst: number;
+    let down: number;
+    let downFirst: number;
+    if (z0 <= 0) {
+      // No form is positive: all charge follows from the mean number of steps.
+      let square = 0;
+      for (let k = 1; k <= n; k++) {
+        term *= mixed[k0 + k - 1]! * inverse;
+        sum += term;
+        mean += k * term;
+        square += k * k * term;
+      }
+      up = 0;
+      upFirst = 0;
+      down = mean - z0 * sum;
+      downFirst = square - z0 * mean;
+    } else {
+      up = z0;
+      upFirst = 0;
+      down = 0;
+      downFirst = 0;
+      for (let k = 1; k <= n; k++) {
+        term *= mixed[k0 + k - 1]! * inverse;
+        sum += term;
+        mean += k * term;
+        const charge = z0 - k;
+        if (charge > 0) {
+          up += charge * term;
+          upFirst += charge * k * term;
+        } else {
+          down -= charge * term;
+          downFirst -= charge * k * term;
+        }
       }
     }
     if (open[f]) {
@@ -71,17 +110,23 @@ function charges(s: ChemicalSystem, a: number, h: number, oh: number, strong: nu
       negativeSlope += scale * (down * mean - downFirst);
     }
   }
+  w[POSITIVE] = positive;
+  w[NEGATIVE] = negative;
+  w[POSITIVE_SLOPE] = positiveSlope;
+  w[NEGATIVE_SLOPE] = negativeSlope;
 }
 
-/** Renews ln γ from molalities; answers with the greatest change. `weight` below 1 damps. */
-function renewActivities(s: ChemicalSystem, weight: number): number {
+/** Renews ln γ from molalities, by that part of the change which WEIGHT says. */
+function renewActivities(s: ChemicalSystem): void {
   const { charges: z, molality: m, lnGamma, pairI, pairJ, pairEpsilon } = s;
   const count = z.length;
   let I = 0;
   for (let i = 0; i < count; i++) I += z[i]! * z[i]! * m[i]!;
   I *= 0.5;
   s.ionicStrength = I;
-  if (s.activity === 'none') return 0;
+  w[CHANGE] = 0;
+  if (s.activity === 'none') return;
+  const weight = w[WEIGHT]!;
   const root = Math.sqrt(I);
   const fresh = scratch;
   if (s.activity === 'davies') {
@@ -107,7 +152,7 @@ function renewActivities(s: ChemicalSystem, weight: number): number {
     const size = by < 0 ? -by : by;
     if (size > change) change = size;
   }
-  return change / weight;
+  w[CHANGE] = change / weight;
 }
 let scratch = new Float64Array(64);
 
@@ -123,10 +168,11 @@ function renewConstants(s: ChemicalSystem): void {
 }
 
 /** Molalities of every species but strong ions at a(H+). */
-function distribute(s: ChemicalSystem, a: number, h: number, oh: number): void {
+function distribute(s: ChemicalSystem): void {
   const { first, steps, firstStep, mixed, open, totals, molality: m } = s;
-  m[0] = h;
-  m[1] = oh;
+  m[0] = w[H]!;
+  m[1] = w[OH]!;
+  const inverse = 1 / w[A]!;
   for (let f = 0; f < first.length; f++) {
     const at = first[f]!;
     const n = steps[f]!;
@@ -135,7 +181,7 @@ function distribute(s: ChemicalSystem, a: number, h: number, oh: number): void {
     let sum = 1;
     m[at] = 1;
     for (let k = 1; k <= n; k++) {
-      term *= mixed[k0 + k - 1]! / a;
+      term *= mixed[k0 + k - 1]! * inverse;
       m[at + k] = term;
       sum += term;
     }
@@ -145,11 +191,10 @@ function distribute(s: ChemicalSystem, a: number, h: number, oh: number): void {
 }
 
 /**
- * Solves a system in place: molalities, ln γ, pH and ionic strength. Allocates nothing.
- * @returns pH, -log10 a(H+)
+ * Solves a system in place: molalities, ln γ, pH (-log10 a(H+)) and ionic strength. Allocates nothing.
  * @throws ChemistryError where no pH between -6 and 20 balances the charges
  */
-export function solveInPlace(s: ChemicalSystem): number {
+export function solveInPlace(s: ChemicalSystem): void {
   const { charges: z, totals, molality: m, lnGamma, firstIon } = s;
   const families = s.first.length;
   if (scratch.length < z.length) scratch = new Float64Array(2 * z.length);
@@ -164,45 +209,60 @@ export function solveInPlace(s: ChemicalSystem): number {
   lnGamma.fill(0);
   if (strong > 0) m[1] = strong;
   else m[0] = -strong;
-  renewActivities(s, 1);
+  w[STRONG] = strong;
+  w[WEIGHT] = 1;
+  renewActivities(s);
   const ideal = s.activity === 'none';
   let x = FIRST_GUESS;
-  let tolerance = ideal ? EXACT : 1e-3;
+  let enough = ideal ? LAST_STEP : 0.03;
   for (let round = 0; round < ROUNDS; round++) {
     renewConstants(s);
-    const gammaH = Math.exp(lnGamma[0]!);
+    const toH = Math.exp(-lnGamma[0]!);
     const kw = Math.exp(s.lnKw - lnGamma[1]!);
     let low = LEAST;
     let high = MOST;
     let step = Infinity;
-    for (let k = 0; k < 200 && step > tolerance; k++) {
-      const a = Math.exp(x);
-      charges(s, a, a / gammaH, kw / a, strong);
+    let a = Math.exp(x);
+    for (let k = 0; k < 200 && step > enough; k++) {
+      w[A] = a;
+      w[H] = a * toH;
+      w[OH] = kw / a;
+      charges(s);
+      const positive = w[POSITIVE]!;
+      const negative = w[NEGATIVE]!;
       const difference = Math.log(positive / negative);
       if (difference > 0) high = x;
       else low = x;
-      const slope = positiveSlope / positive - negativeSlope / negative;
+      const slope = w[POSITIVE_SLOPE]! / positive - w[NEGATIVE_SLOPE]! / negative;
       let next = x - difference / slope;
-      if (!(next > low && next < high)) {
-        if (difference === 0) break;
+      if (next === x) break;
+      if (next > low && next < high) step = Math.abs(next - x);
+      else {
+        // The middle says nothing about how near the answer is.
         next = (low + high) / 2;
+        step = Infinity;
       }
-      step = Math.abs(next - x);
       x = next;
+      a = Math.exp(x);
     }
-    const a = Math.exp(x);
-    distribute(s, a, a / gammaH, kw / a);
+    w[A] = a;
+    w[H] = a * toH;
+    w[OH] = kw / a;
+    distribute(s);
     if (ideal) break;
-    const change = renewActivities(s, round < 15 ? 1 : round < 60 ? 0.5 : 0.2);
-    if (change < EXACT * 4 && tolerance <= EXACT) break;
-    tolerance = Math.max(EXACT, Math.min(tolerance, change * 1e-3));
+    w[WEIGHT] = round < 15 ? 1 : round < 60 ? 0.5 : 0.2;
+    renewActivities(s);
+    const change = w[CHANGE]!;
+    if (change < LAST_CHANGE && enough <= LAST_STEP) break;
+    enough = Math.max(LAST_STEP, Math.min(enough, change * 0.1));
   }
-  if (ideal) renewActivities(s, 1);
-  return judge(s, x);
+  if (ideal) renewActivities(s);
+  s.pH = -x / LN10;
+  judge(s);
 }
 
 /** Judges the answer after solving: charges balance, and pH lies where a liquid can be. */
-function judge(s: ChemicalSystem, x: number): number {
+function judge(s: ChemicalSystem): void {
   let net = 0;
   let all = 0;
   for (let i = 0; i < s.charges.length; i++) {
@@ -211,11 +271,9 @@ function judge(s: ChemicalSystem, x: number): number {
     all += charge < 0 ? -charge : charge;
   }
   s.residual = net / all;
-  s.pH = -x / LN10;
   if (!(Math.abs(s.residual) < 1e-9))
     throw new ChemistryError(
       'amounts',
       `No pH balances these charges (left over: ${s.residual.toExponential(1)}).`,
     );
-  return s.pH;
 }

@@ -35,8 +35,9 @@ export function Question({ spec, given }: Props) {
   const view = useStore(work.store);
   const [say, live] = useLiveRegion();
   useEffect(() => {
+    const stop = work.start();
     if (before) work.edit(before);
-    return work.start();
+    return stop;
   }, [work, before]);
   const { marked, askedBack, phase, word } = view;
   const draft = draftFor(spec, view.draft);
@@ -53,7 +54,7 @@ export function Question({ spec, given }: Props) {
       ? stillMisplaced(draft, marked?.answer, marked?.marking.misplaced ?? [])
       : new Set<string>();
   return (
-    <section className="question porcelain" id={spec.id} aria-labelledby={`${spec.id}-kind`}>
+    <section className="question porcelain" id={spec.id} aria-labelledby={`${spec.id}-kind ${ask}`}>
       <p className="tape tape-ink question-kind" id={`${spec.id}-kind`}>
         {KIND[spec.kind]}
       </p>

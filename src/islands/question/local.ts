@@ -1,4 +1,3 @@
-import { createStore, entries, get, set } from 'idb-keyval';
 import type { Answer, Marking } from '../../lessons/questions/types';
 
 /** An answer that is on its way, with the id that makes it count once. */
@@ -19,36 +18,41 @@ export interface MarkedAnswer {
 export interface QuestionRecord {
   readonly revision: number;
   readonly draft: Answer | null;
+  /** Answers that were counted when the draft was written: one given elsewhere since is newer than the draft. */
+  readonly attempt: number;
   readonly pending: Pending | null;
   readonly marked: MarkedAnswer | null;
   readonly done: boolean;
 }
 
-let opened: ReturnType<typeof createStore> | undefined;
-const store = () => (opened ??= createStore('dropwise-answers', 'answers'));
+const PREFIX = 'dropwise-answer:';
 
 /** Whose record it is stands in its key: on a shared computer nobody meets another one's words. */
 export const keyOf = (person: string | null, lesson: string, question: string): string =>
-  `${person ?? 'visitor'}/${lesson}/${question}`;
+  `${PREFIX}${person ?? 'visitor'}/${lesson}/${question}`;
 
 /** Private windows and full disks may refuse storage: a draft then lasts as long as the page. */
-async function quietly<T>(work: () => Promise<T>, otherwise: T): Promise<T> {
+function quietly<T>(work: () => T, otherwise: T): T {
   try {
-    return await work();
+    return work();
   } catch {
     return otherwise;
   }
 }
 
-export const loadQuestion = (key: string): Promise<QuestionRecord | undefined> =>
-  quietly(() => get<QuestionRecord>(key, store()), undefined);
+/** Local storage, and not a database: what is written is there at once, also when the page goes with the next key. */
+export const loadQuestion = (key: string): QuestionRecord | null =>
+  quietly(() => JSON.parse(localStorage.getItem(key) ?? 'null') as QuestionRecord | null, null);
 
-export const keepQuestion = (key: string, record: QuestionRecord): Promise<void> =>
-  quietly(() => set(key, record, store()), undefined);
+export const keepQuestion = (key: string, record: QuestionRecord): void =>
+  quietly(() => localStorage.setItem(key, JSON.stringify(record)), undefined);
 
 /** How many answers of a person this browser holds that the server does not have. */
-export const countUnsentAnswers = (person: string): Promise<number> =>
-  quietly(async () => {
-    const all = await entries<string, QuestionRecord>(store());
-    return all.filter(([key, record]) => key.startsWith(`${person}/`) && record.pending).length;
-  }, 0);
+export const countUnsentAnswers = (person: string): number =>
+  quietly(
+    () =>
+      Object.keys(localStorage).filter(
+        (key) => key.startsWith(`${PREFIX}${person}/`) && loadQuestion(key)?.pending,
+      ).length,
+    0,
+  );

@@ -6,8 +6,6 @@ import { keepQuestion, keyOf, loadQuestion, type MarkedAnswer, type Pending } fr
 
 const FIRST_RETRY_MS = 1000;
 const LONGEST_RETRY_MS = 30_000;
-/** A draft is written down once the hand rests. */
-const REST_MS = 300;
 
 /** What a page was given by the server about this question. */
 export interface GivenQuestion {
@@ -54,7 +52,6 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
   let pending: Pending | null = null;
   let retry_ms = FIRST_RETRY_MS;
   let timer: ReturnType<typeof setTimeout> | undefined;
-  let resting: ReturnType<typeof setTimeout> | undefined;
   let touched = false;
 
   const store = createStore<QuestionView>(() => ({
@@ -67,19 +64,27 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
   }));
   const show = (part: Partial<QuestionView>) => store.setState(part);
   const keep = () => {
-    clearTimeout(resting);
     const { draft, marked, done } = store.getState();
-    void keepQuestion(key, { revision, draft, pending, marked: person === null ? marked : null, done });
+    const attempt = marked?.attempt ?? 0;
+    keepQuestion(key, {
+      revision,
+      draft,
+      attempt,
+      pending,
+      marked: person === null ? marked : null,
+      done,
+    });
   };
 
-  async function load(): Promise<void> {
-    const found = await loadQuestion(key);
+  function load(): void {
+    const found = loadQuestion(key);
     if (!found) return;
     // Another revision may ask for something else: what was said to the old one does not stand below it.
     const same = found.revision === revision;
     pending ??= same ? found.pending : null;
+    const newest = found.attempt >= (given.marked?.attempt ?? 0);
     show({
-      ...(found.draft && !touched ? { draft: found.draft } : {}),
+      ...(found.draft && newest && !touched ? { draft: found.draft } : {}),
       ...(person === null ? { done: found.done, marked: same ? found.marked : null } : {}),
     });
     if (store.getState().done) tellDone([question]);
@@ -132,8 +137,7 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
     edit(draft) {
       touched = true;
       show({ draft });
-      clearTimeout(resting);
-      resting = setTimeout(keep, REST_MS);
+      keep();
     },
     submit(answer) {
       if (store.getState().phase !== 'open') return;
@@ -155,19 +159,11 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
       const online = () => {
         if (pending) void send();
       };
-      const leave = () => {
-        if (touched) keep();
-      };
       window.addEventListener('online', online);
-      window.addEventListener('pagehide', leave);
-      document.addEventListener('visibilitychange', leave);
-      void load();
+      load();
       return () => {
         clearTimeout(timer);
-        leave();
         window.removeEventListener('online', online);
-        window.removeEventListener('pagehide', leave);
-        document.removeEventListener('visibilitychange', leave);
       };
     },
   };

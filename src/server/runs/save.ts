@@ -125,13 +125,17 @@ async function store(
   return { count: state.count, metAims: [...already, ...met.keys()], ...(refused ? { refused } : {}) };
 }
 
-/** The moves that are not stored yet, or null where the stored ones are not the sender's own. */
+/**
+ * The moves that are not stored yet, or null where the stored ones are not the sender's own. A request that comes late, after
+ * a later one of the same sender, brings nothing new.
+ */
 function unknownOf(
   sent: readonly SentMove[],
   since: readonly { opId: string }[],
 ): readonly SentMove[] | null {
-  for (const [index, stored] of since.entries()) if (sent[index]?.opId !== stored.opId) return null;
-  return sent.slice(since.length);
+  const both = Math.min(sent.length, since.length);
+  for (let i = 0; i < both; i++) if (sent[i]!.opId !== since[i]!.opId) return null;
+  return sent.slice(both);
 }
 
 /** A bench with a prediction takes no move before it is locked in. */

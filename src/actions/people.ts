@@ -1,5 +1,6 @@
 import { defineAction, ActionError, type ActionAPIContext } from 'astro:actions';
 import { z } from 'astro:schema';
+import { CONVENTIONS, type Conventions } from '../lessons/conventions.ts';
 import { Person, withTransaction } from '../server/database/index.ts';
 import { log } from '../server/log.ts';
 import {
@@ -30,6 +31,7 @@ const typed = z.string().max(1024);
 const token = z.string().max(200);
 const displayName = z.string().trim().min(1, 'Write the name that you want to be called.').max(120);
 const HOUR_S = 3600;
+type Options<K extends keyof Conventions> = [Conventions[K], ...Conventions[K][]];
 
 /** What is wrong with one field, in the form that pages read: JSON of field names and sentences. */
 function refuse(field: string, message: string): never {
@@ -193,6 +195,22 @@ export const people = {
     handler: async (input, context) => {
       await Person.update({ displayName: input.displayName }, { where: { id: signedIn(context).id } });
       return { changed: true };
+    },
+  }),
+
+  setConventions: defineAction({
+    accept: 'form',
+    input: z
+      .object({
+        decimal: z.enum(CONVENTIONS.decimal as Options<'decimal'>),
+        concentration: z.enum(CONVENTIONS.concentration as Options<'concentration'>),
+        volume: z.enum(CONVENTIONS.volume as Options<'volume'>),
+        pH: z.enum(CONVENTIONS.pH as Options<'pH'>),
+      })
+      .strict(),
+    handler: async (conventions, context) => {
+      await Person.update({ conventions }, { where: { id: signedIn(context).id } });
+      return conventions;
     },
   }),
 

@@ -1,31 +1,8 @@
 /** Numbers and units as a reader is used to them. Values are kept in mol, L, mol/L; they are formatted last. */
 
-/** What a course and its reader switch: the sign between digits and the names of units. */
-export interface Conventions {
-  readonly decimal: '.' | ',';
-  readonly concentration: 'mol/L' | 'mol dm⁻³' | 'M';
-  readonly volume: 'mL' | 'cm³';
-}
+import { concentrationName, USUAL, type Conventions } from './conventions.ts';
 
-export const USUAL: Conventions = { decimal: '.', concentration: 'mol/L', volume: 'mL' };
-
-/** Every way that can be chosen, the usual one first. */
-export const CONVENTIONS: { readonly [K in keyof Conventions]: readonly Conventions[K][] } = {
-  decimal: ['.', ','],
-  concentration: ['mol/L', 'mol dm⁻³', 'M'],
-  volume: ['mL', 'cm³'],
-};
-
-/** Conventions as they were stored; what is missing or unknown is as usual. */
-export function conventionsFrom(stored: Readonly<Record<string, unknown>> | null | undefined): Conventions {
-  const pick = <K extends keyof Conventions>(name: K): Conventions[K] =>
-    CONVENTIONS[name].find((one) => one === stored?.[name]) ?? USUAL[name];
-  return {
-    decimal: pick('decimal'),
-    concentration: pick('concentration'),
-    volume: pick('volume'),
-  };
-}
+export { USUAL, type Conventions } from './conventions.ts';
 
 /** How a computed quantity is written. */
 export interface NumberStyle {
@@ -60,11 +37,7 @@ export const UNITS: Readonly<Record<string, number>> = {
 /** The unit's name in a reader's conventions. */
 export function unitName(unit: string, conventions: Conventions): string {
   const concentration = /^([mµ]?)mol\/L$/.exec(unit);
-  if (concentration) {
-    const prefix = concentration[1]!;
-    if (conventions.concentration === 'M') return `${prefix}M`;
-    return conventions.concentration === 'mol/L' ? unit : `${prefix}mol dm⁻³`;
-  }
+  if (concentration) return concentrationName(concentration[1]!, conventions);
   if (conventions.volume === 'cm³') {
     if (unit === 'mL') return 'cm³';
     if (unit === 'L') return 'dm³';

@@ -4,14 +4,13 @@ export { forLearner } from './learner.ts';
 export {
   CONVENTIONS,
   conventionsFrom,
-  formatNumber,
-  formatProse,
-  formatQuantity,
-  unitName,
+  htmlIn,
+  usualIn,
   USUAL,
+  wordsIn,
   type Conventions,
-  type NumberStyle,
-} from './format.ts';
+} from './conventions.ts';
+export { formatNumber, formatProse, formatQuantity, unitName, type NumberStyle } from './format.ts';
 export { misconceptions } from './misconceptions.ts';
 export { AnswerError, mark, TELLING_ATTEMPT } from './questions/mark.ts';
 export type { Answer, Marking, Question, QuestionForLearner, QuestionKind, Tube } from './questions/types.ts';

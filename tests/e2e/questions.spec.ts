@@ -326,6 +326,49 @@ test('with an account: the server keeps answers, another browser shows them, the
   await elsewhere.close();
 });
 
+test('numbers and units are written as the reader chose: in prose, questions, feedback and on the bench', async ({
+  page,
+  mailTo,
+  expectAccessible,
+}) => {
+  test.setTimeout(90_000);
+  const person = newPerson('Jonas Weidner');
+  await signUp(page, mailTo, person);
+  await signIn(page, person, '/account');
+  const form = page.locator('form').filter({ hasText: 'Decimal sign' });
+  await form.getByLabel('4,76, with a comma').check();
+  await form.getByLabel('0.10 mol dm⁻³').check();
+  await form.getByLabel('25 cm³ and 1 dm³').check();
+  await form.getByRole('button', { name: 'Write them like this' }).click();
+  await expect(page.getByText('write numbers and units like this now')).toBeVisible();
+  await expect(form.getByLabel('4,76, with a comma')).toBeChecked();
+  await expectAccessible();
+
+  await page.goto(LESSON);
+  await expect(page.getByText('hydrochloric acid, 0,10 mol dm⁻³, into each beaker')).toBeVisible();
+  await page.locator('.bench').scrollIntoViewIfNeeded();
+  await expect(page.locator('.tag-value').nth(1)).toHaveText('4,76');
+  await expect(page.locator('[data-bottle="acid"]')).toContainText('0,10 mol dm⁻³');
+  await expect(page.locator('[data-aim="buffer-450"]')).toContainText('pH 4,50 ± 0,02');
+  await page.locator('.prediction').getByText('The water, after a drop or two.').click();
+  await page.locator('.prediction').getByText('certain').click();
+  await page.getByRole('button', { name: 'Lock in my prediction' }).click();
+  await expect(page.locator('.prediction')).toContainText('Locked in.');
+  await page.locator('[data-bottle="acid"]').click();
+  await page.locator('[data-vessel="buffer"]').click();
+  await page.locator('.bench').getByRole('button', { name: 'Add', exact: true }).click();
+  await expect(page.locator('.tag-value').nth(1)).toHaveText('4,40');
+  await expect(page.locator('.bench .notebook')).toContainText('1,00');
+  // What is etched into the glass stays as it was made.
+  const bench = (await page.locator('.bench').innerText()).replaceAll('100 mL', '');
+  expect(bench).not.toMatch(/\d\.\d|\bmL\b|mol\/L/);
+
+  await at(page, 'acid-in');
+  await field(page, 'acid-in').fill('4.76');
+  await check(page, 'acid-in');
+  await expect(feedback(page, 'acid-in').locator('.poured-tube').first()).toContainText('pH 4,76');
+});
+
 test.describe('with a session that has ended', () => {
   test.use({ expectedConsole: [/status of 401/] });
   test('a page that outlived its session keeps the answer and says what to do', async ({

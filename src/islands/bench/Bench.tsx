@@ -1,6 +1,8 @@
 import { useState, type ReactNode } from 'react';
 import { useStore } from 'zustand';
 import type { BenchSpec } from '../../bench/types';
+import { USUAL, type Conventions } from '../../lessons/conventions';
+import { ReaderProvider } from '../words';
 import './bench.css';
 import { BenchView } from './BenchView';
 import type { RunView } from './run';
@@ -16,6 +18,8 @@ export interface BenchProps {
   /** Hazard marks by shelf id, from the reviewed data of each concentration; most dilute bottles have none. */
   hazards?: Readonly<Record<string, readonly string[]>>;
   variant?: 'lesson' | 'home';
+  /** How its reader writes numbers and units. */
+  conventions?: Conventions;
   /** The home page's words, on the wall beside the vessels. */
   children?: ReactNode;
 }
@@ -30,11 +34,18 @@ const SAVING_WORDS: Record<RunView['saving'], string> = {
 };
 
 /** A bench as an island: `client:visible`, or rendered on the server alone as a still picture with its words. */
-export function Bench({ spec, given, hazards, variant = 'lesson', children }: BenchProps) {
+export function Bench({
+  spec,
+  given,
+  hazards,
+  variant = 'lesson',
+  conventions = USUAL,
+  children,
+}: BenchProps) {
   const [work] = useState<Work | undefined>(() => (given ? workFor(given) : undefined));
   const [store] = useState(() => createBenchStore({ spec, work }));
   return (
-    <>
+    <ReaderProvider value={conventions}>
       {work && <Questions work={work} />}
       <BenchView
         spec={spec}
@@ -52,7 +63,7 @@ export function Bench({ spec, given, hazards, variant = 'lesson', children }: Be
       >
         {children}
       </BenchView>
-    </>
+    </ReaderProvider>
   );
 }
 

@@ -1,6 +1,7 @@
 import { lazy, Suspense, useMemo, useState, type ReactNode } from 'react';
 import { describe } from '../../bench/describe';
 import type { BenchSpec, ShelfItem } from '../../bench/types';
+import { useWords } from '../words';
 import { Apron, type ApronProps, type Choice } from './apron/Apron';
 import { moreKinds, quickDeeds } from './apron/deeds';
 import { BenchScene } from './BenchScene';
@@ -35,13 +36,14 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
   const { run, looks, hands, from, into, act, say } = bench;
   const { vessels, shelf } = looks;
   const { hand, dispatch } = hands;
+  const words = useWords();
   const [asking, setAsking] = useState(false);
   const [more, setMore] = useState(false);
   const lesson = variant === 'lesson';
   // While something flows, the words wait: tags and the running volume tell it, and the rest is said when it ends.
   const [told, setTold] = useState(run);
   if (!run.pouring && told !== run) setTold(run);
-  const description = useMemo(() => describe(told.readings), [told.readings]);
+  const description = useMemo(() => describe(told.readings).map(words), [told.readings, words]);
   const sheetVessel = into === BOTH ? (vessels[1]?.id ?? '') : into;
   const below = useMemo(() => sheet?.(told, sheetVessel), [sheet, told, sheetVessel]);
 
@@ -91,7 +93,9 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
             blocked={into === BOTH ? 'A bottle is held over one vessel at a time.' : null}
             volume_uL={bench.volume_uL}
             most_uL={Math.min(stock_uL, room_uL, MOST_UL)}
-            limit={limitSentence(stock_uL, room_uL, taking.length === 1 ? taking[0]!.name : 'One of them')}
+            limit={words(
+              limitSentence(stock_uL, room_uL, taking.length === 1 ? taking[0]!.name : 'One of them'),
+            )}
             deeds={quickDeeds(spec, run.readings, into).map((deed) => ({
               key: deed.key,
               label: deed.label,
@@ -100,7 +104,7 @@ export function BenchView({ spec, store, variant, hazardsOf, savingWords, sheet,
               },
             }))}
             canUndo={standingMove(run) !== null}
-            message={messageOf(run, hand.at)}
+            message={messageOf(run, hand.at, words)}
             saving={<p className="saving">{savingWords(run)}</p>}
             more={
               lesson && moreKinds(spec).length > 0
@@ -173,13 +177,13 @@ function targets({ vessels }: Looks, lesson: boolean): Choice[] {
 }
 
 /** The sentence under the ways to pour: why not, else what the hand can do next, else what happened. */
-function messageOf(run: RunView, hand: string): ApronProps['message'] {
-  if (run.refusal) return { kind: 'refusal', text: run.refusal.sentence };
+function messageOf(run: RunView, hand: string, words: (text: string) => string): ApronProps['message'] {
+  if (run.refusal) return { kind: 'refusal', text: words(run.refusal.sentence) };
   if (hand === 'picked') return { kind: 'hint', text: 'Now choose a vessel.' };
   if (hand === 'poised') {
     return { kind: 'hint', text: 'Hold to pour, tap for one drop. Escape puts the bottle back.' };
   }
   const { spills, notices } = run.readings;
   const notice = spills[0] ?? notices.find((one) => one.kind !== 'said') ?? notices[0];
-  return notice ? { kind: 'hint', text: notice.sentence } : null;
+  return notice ? { kind: 'hint', text: words(notice.sentence) } : null;
 }

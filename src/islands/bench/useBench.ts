@@ -6,6 +6,7 @@ import type { Pourable } from './hand/store';
 import { useHand } from './hand/useHand';
 import type { RunStore, RunView } from './run';
 import { createLooks, type Looks } from './scene/looksOf';
+import { useWords } from '../words';
 import { useLiveRegion } from './words/LiveRegion';
 import { added, reading, tookBack } from './words/sentences';
 import type { ToastWords } from './words/Toast';
@@ -41,7 +42,8 @@ export function useBench(
   hazardsOf: (item: ShelfItem) => readonly string[],
 ) {
   const run = useStore(store);
-  const [looksOf] = useState(() => createLooks(spec, hazardsOf));
+  const words = useWords();
+  const [looksOf] = useState(() => createLooks(spec, hazardsOf, words));
   const looks: Looks = looksOf(run.readings);
   const [from, setFrom] = useState(spec.shelf[0]?.id ?? '');
   const [into, setInto] = useState(spec.vessels[0]?.id ?? '');
@@ -49,7 +51,8 @@ export function useBench(
   const [toast, setToast] = useState<ToastWords | null>(null);
   const [settling, settle] = usePassing<string>(SETTLE_MS);
   const [dripping, setDripping] = usePassing<{ from: string; into: string; drops: number }>(DROPPER_STAYS_MS);
-  const [say, liveRegion] = useLiveRegion();
+  const [speak, liveRegion] = useLiveRegion();
+  const say = (message: string) => speak(words(message));
 
   const lookAt = (id: string) =>
     looksOf(store.getState().readings).vessels.find((vessel) => vessel.id === id);
@@ -122,15 +125,15 @@ export function useBench(
     const { refusal } = store.getState();
     if (refusal) say(refusal.sentence);
     if (refusal || !last) return;
-    const words = tookBack(last, looks.vessels);
-    say(words);
+    const taken = tookBack(last, looks.vessels);
+    say(taken);
     const putBack = () => {
       setToast(null);
       act(last);
     };
     setToast((seen) => ({
       n: (seen?.n ?? 0) + 1,
-      text: words,
+      text: words(taken),
       action: { label: 'Put it back', onDo: putBack },
     }));
   };

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { useStore } from 'zustand';
+import { USUAL, wordsIn, type Conventions } from '../../lessons/conventions';
 import type { PredictionForLearner } from '../../lessons/types';
 import { workFor, type GivenWork, type Work } from '../bench/sync/work';
 import './prediction.css';
@@ -7,6 +8,7 @@ import './prediction.css';
 interface Props {
   readonly spec: PredictionForLearner;
   readonly given: GivenWork;
+  readonly conventions?: Conventions;
 }
 
 const SURE = [
@@ -20,7 +22,7 @@ const SURE = [
  * A prediction: locked in before the bench opens; after the pour the learner first says what they saw, and only then
  * stand prediction, observation and computed result side by side.
  */
-export function Prediction({ spec, given }: Props) {
+export function Prediction({ spec, given, conventions = USUAL }: Props) {
   const [work] = useState(() => workFor(given));
   const { prediction, observed, outcome, moved, ready, word } = useStore(work.store);
   return (
@@ -44,7 +46,7 @@ export function Prediction({ spec, given }: Props) {
             <Compare
               spec={spec}
               observed={observed}
-              outcome={outcome}
+              outcome={outcome && { ...outcome, sentence: wordsIn(outcome.sentence, conventions) }}
               predicted={prediction.answer}
               word={word}
             />

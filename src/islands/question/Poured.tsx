@@ -4,6 +4,7 @@ import type { Tube } from '../../lessons/questions/types';
 import { Glass } from '../bench/glass/Glass';
 import { paint } from '../bench/glass/light';
 import { shapeOf } from '../bench/glass/shapeOf';
+import { useWords } from '../words';
 
 /** Both tubes are filled alike: what differs is what is compared. */
 const VOLUME_ML = 13;
@@ -20,8 +21,10 @@ export function Poured({ yours, asked }: { yours: Tube; asked: Tube }) {
 }
 
 function One({ tube }: { tube: Tube }) {
+  const words = useWords();
   const shape = shapeOf('test-tube');
-  const [whose, ...told] = tube.label.split(': ');
+  const pH = tube.pH === null ? null : words(tube.pH.toFixed(2).replace('-', '−'));
+  const [whose, given] = tube.label.split(': ');
   return (
     <figure className="poured-tube">
       <Glass
@@ -31,10 +34,10 @@ function One({ tube }: { tube: Tube }) {
       />
       <figcaption>
         <span className="question-label">{whose}</span>
-        {told.length > 0 && <span>{told.join(': ')}</span>}
-        {tube.pH !== null && (
+        {given !== undefined && given !== pH && <span>{given}</span>}
+        {pH !== null && (
           <span className="poured-pH">
-            <span>pH</span> <strong>{tube.pH.toFixed(2).replace('-', '−')}</strong>
+            <span>pH</span> <strong>{pH}</strong>
           </span>
         )}
         <span className="poured-colour">

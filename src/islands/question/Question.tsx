@@ -1,8 +1,10 @@
 import { useEffect, useState, type FormEvent } from 'react';
 import { useStore } from 'zustand';
+import { USUAL, type Conventions } from '../../lessons/conventions';
 import type { Answer, QuestionForLearner } from '../../lessons/questions/types';
 import '../bench/bench.css';
 import { useLiveRegion } from '../bench/words/LiveRegion';
+import { ReaderProvider } from '../words';
 import { draftFor, stillMisplaced, typedBefore } from './drafts';
 import { Feedback } from './Feedback';
 import { Html } from './Html';
@@ -25,10 +27,19 @@ const KIND: Record<QuestionForLearner['kind'], string> = {
 interface Props {
   readonly spec: QuestionForLearner;
   readonly given: GivenQuestion;
+  readonly conventions?: Conventions | undefined;
 }
 
 /** A question: answered here, marked by the server, and never answered with right or wrong alone. */
-export function Question({ spec, given }: Props) {
+export function Question({ conventions = USUAL, ...props }: Props) {
+  return (
+    <ReaderProvider value={conventions}>
+      <Card {...props} />
+    </ReaderProvider>
+  );
+}
+
+function Card({ spec, given }: Omit<Props, 'conventions'>) {
   // Read while the server's form still stands: its fields are about to be taken over.
   const [before] = useState(() => (given.marked ? null : typedBefore(spec)));
   const [work] = useState(() => createQuestionWork(given));

@@ -1,8 +1,9 @@
-import { unitName, USUAL } from '../format.ts';
+import { USUAL, type Conventions } from '../conventions.ts';
+import { unitName } from '../format.ts';
 import { scopeOf } from '../scope.ts';
 import type { CompiledLesson, Learner } from '../types.ts';
 import { mixtureOf } from './tubes.ts';
-import type { Question, QuestionForLearner } from './types.ts';
+import type { Numeric, Question, QuestionForLearner } from './types.ts';
 import { fillText, itemsOf, rightsOf, valuesFor } from './variants.ts';
 
 /** A question as a page may hold it: the learner's own values and order, without key, feedback or model answer. */
@@ -35,7 +36,7 @@ export function questionForLearner(
         ...base,
         kind: 'numeric',
         unit,
-        hint: `${question.digits} ${question.by === 'decimals' ? 'decimals' : 'significant figures'}`,
+        hint: hintOf(question, conventions),
         ...(question.help === 'example'
           ? { example: { ask: other(question.ask), steps: question.steps.map(other) } }
           : {}),
@@ -54,4 +55,12 @@ export function questionForLearner(
     case 'explain':
       return { ...base, kind: 'explain' };
   }
+}
+
+/** How many digits are asked for, and by which rule a pH has them. */
+function hintOf({ unit, digits, by }: Numeric, { pH }: Conventions): string {
+  const hint = `${digits} ${by === 'decimals' ? 'decimals' : digits === 1 ? 'significant figure' : 'significant figures'}`;
+  return unit === '' && by === 'decimals' && pH === 'significant figures'
+    ? `${hint}: as many as the concentration has significant figures`
+    : hint;
 }

@@ -97,7 +97,7 @@ export function markNumeric(
   if (within(read.base, key, tolerance))
     return {
       verdict: 'right',
-      feedback: `The engine gets ${escape(told.key)}.`,
+      feedback: `The engine gets ${escape(told.key)}.${tooManyDigits(question, read.decimals, conventions)}`,
       misconceptions: [],
       ...told,
       ...(poured ? { poured } : {}),
@@ -110,7 +110,10 @@ export function markNumeric(
   )
     return {
       verdict: 'ask',
-      feedback: `Give ${question.digits} decimals: the decimals of a pH are the significant figures of its concentration.`,
+      feedback:
+        conventions.pH === 'significant figures'
+          ? `Give ${question.digits} decimals: the decimals of a pH are the significant figures of its concentration.`
+          : `Give the pH with ${question.digits} decimals.`,
       misconceptions: [],
     };
   const wrong = traced(question, read.base, key, scope);
@@ -129,6 +132,12 @@ export function markNumeric(
     ...(tell ? told : {}),
   };
 }
+
+/** By the rule of significant figures, digits that nobody can know are named, and not held against anybody. */
+const tooManyDigits = ({ unit, digits, by }: Numeric, typed: number, { pH }: Conventions): string =>
+  pH === 'significant figures' && unit === '' && by === 'decimals' && typed > digits
+    ? ` You gave ${typed} decimals; ${digits} are known, since the concentration has ${digits} significant figures.`
+    : '';
 
 /** An answer that no wrong method explains: its tube says on which side it is. */
 function compared({ yours, asked }: { readonly yours: Tube; readonly asked: Tube }): string {

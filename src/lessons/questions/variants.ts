@@ -1,4 +1,5 @@
 import { shuffled } from '../../bench/seed.ts';
+import { htmlIn } from '../conventions.ts';
 import { formatProse, formatQuantity, type Conventions } from '../format.ts';
 import type { RunScope } from '../formula.ts';
 import type { Mixture } from '../mixture.ts';
@@ -50,10 +51,11 @@ const unescape = (text: string): string =>
 
 /** Fills the quantities of a question's text with a learner's values. */
 export function fillText(html: string, scope: RunScope, conventions: Conventions, mixture?: Mixture): string {
-  return formatProse(html, conventions).replace(FORMULA, (_, source: string) => {
+  const filled = formatProse(html, conventions).replace(FORMULA, (_, source: string) => {
     const quantity = parseQuantity(unescape(source), mixture);
     return `<data>${formatQuantity(valueOfQuantity(quantity, scope), quantity.style, conventions)}</data>`;
   });
+  return htmlIn(filled, conventions);
 }
 
 /**

@@ -1,6 +1,12 @@
 import { createHash } from 'node:crypto';
 import { createState, replay, type BenchSpec, type BenchState } from '../../bench/index.ts';
-import { conventionsFrom, type CompiledLesson, type Learner, type Question } from '../../lessons/index.ts';
+import {
+  conventionsFrom,
+  usualIn,
+  type CompiledLesson,
+  type Learner,
+  type Question,
+} from '../../lessons/index.ts';
 import type { StoredLesson } from '../lessons/index.ts';
 import { newestRuns } from '../runs/open.ts';
 import { movesAfter } from '../runs/state.ts';
@@ -44,7 +50,7 @@ export async function learnerOf(
 ): Promise<Learner> {
   const base: Learner = {
     seed: person ? seedOf(person.publicId, lesson.slug) : VISITOR_SEED,
-    conventions: conventionsFrom(person?.conventions),
+    conventions: conventionsFrom(person?.conventions, usualIn(lesson.lesson.lang)),
   };
   const benches = new Set(questions.flatMap(benchesOf));
   if (!person || benches.size === 0) return base;

@@ -227,7 +227,7 @@ solution: "It is \`= pH(mixture)\`."`);
   it('reads in the learner’s conventions', () => {
     const shown = forLearner(many.lesson, {
       seed: 7,
-      conventions: { decimal: ',', concentration: 'mol dm⁻³', volume: 'cm³' },
+      conventions: { decimal: ',', concentration: 'mol dm⁻³', volume: 'cm³', pH: 'significant figures' },
     });
     expect(JSON.stringify(shown.at(-1))).toMatch(/cm³.*0,\d+\u00a0mol dm⁻³/);
   });

@@ -62,7 +62,12 @@ describe('a number as a learner types it', () => {
 });
 
 describe('a number as a reader sees it', () => {
-  const schools: Conventions = { decimal: ',', concentration: 'mol dm⁻³', volume: 'cm³' };
+  const schools: Conventions = {
+    decimal: ',',
+    concentration: 'mol dm⁻³',
+    volume: 'cm³',
+    pH: 'significant figures',
+  };
   it.each([
     [0.0000123, 3, 'figures', '1.23 × 10⁻⁵'],
     [0.1, 3, 'figures', '0.100'],

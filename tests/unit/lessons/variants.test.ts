@@ -10,7 +10,12 @@ import { valuesFor } from '../../../src/lessons/questions/variants.ts';
 import { scopeOf } from '../../../src/lessons/scope.ts';
 
 const LEARNERS = 1000;
-const COMMA: Conventions = { decimal: ',', concentration: 'mol dm⁻³', volume: 'cm³' };
+const COMMA: Conventions = {
+  decimal: ',',
+  concentration: 'mol dm⁻³',
+  volume: 'cm³',
+  pH: 'significant figures',
+};
 
 const folder = new URL('../../../content/lessons/', import.meta.url);
 const lessons = readdirSync(folder)

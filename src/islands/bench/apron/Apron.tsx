@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import { useWords } from '../../words';
 import { AgainIcon, MoreIcon, UndoIcon, WarnIcon } from '../scene/icons';
 import { HoldButton } from './HoldButton';
 import { VolumeField } from './VolumeField';
@@ -53,6 +54,7 @@ export interface ApronProps {
 
 /** The bench's front: a sentence that pours, in three equal ways. */
 export function Apron(props: ApronProps) {
+  const words = useWords();
   const off = props.blocked !== null || props.most_uL < 1;
   const hold = (
     <HoldButton
@@ -144,7 +146,7 @@ export function Apron(props: ApronProps) {
         <span className="or">or</span>
         <div className="way">
           {drop}
-          <p className="under">0.05 mL</p>
+          <p className="under">{words('0.05 mL')}</p>
         </div>
         <span className="or">or</span>
         <VolumeField

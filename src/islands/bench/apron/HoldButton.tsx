@@ -1,5 +1,6 @@
 import { useRef, type KeyboardEvent, type MouseEvent, type PointerEvent } from 'react';
 import { DropIcon } from '../scene/icons';
+import { useWords } from '../../words';
 import { formatMl } from '../scene/looks';
 
 interface Props {
@@ -17,6 +18,7 @@ interface Props {
  * reader's own click) starts the pour, and the next one ends it.
  */
 export function HoldButton({ off, running_uL, onStart, onEnd, onInterrupt, onCancel }: Props) {
+  const words = useWords();
   const held = useRef<'no' | 'pointer' | 'key' | 'switch'>('no');
 
   const end = (how: () => void) => {
@@ -76,7 +78,7 @@ export function HoldButton({ off, running_uL, onStart, onEnd, onInterrupt, onCan
     >
       <DropIcon />
       <span className="hold-words" aria-hidden={running_uL !== null || undefined}>
-        {running_uL === null ? 'Hold to pour' : formatMl(running_uL)}
+        {running_uL === null ? 'Hold to pour' : words(formatMl(running_uL))}
       </span>
       {running_uL !== null && <span className="visually-hidden">Pouring. Let go to stop</span>}
     </button>

@@ -1,5 +1,6 @@
 import { useId, useState, type KeyboardEvent } from 'react';
 import { DROP_UL, formatVolume, nextDown, nextUp, nudge, parseVolume } from '../hand/volume';
+import { useWords } from '../../words';
 import { WarnIcon } from '../scene/icons';
 
 interface Props {
@@ -15,6 +16,7 @@ interface Props {
 /** An exact volume, typed or stepped, and the button that adds it. */
 export function VolumeField({ volume_uL, most_uL, limit, onChange, onAdd }: Props) {
   const id = useId();
+  const words = useWords();
   const [draft, setDraft] = useState<string | null>(null);
   const parsed = draft === null ? ({ ok: true, volume_uL } as const) : parseVolume(draft);
   const tooMuch = parsed.ok && parsed.volume_uL > most_uL;
@@ -68,14 +70,14 @@ export function VolumeField({ volume_uL, most_uL, limit, onChange, onAdd }: Prop
             −
           </button>
           <label className="stepper-field">
-            <span className="visually-hidden">Volume in mL</span>
+            <span className="visually-hidden">{words('Volume in mL')}</span>
             <input
               id={id}
               type="text"
               inputMode="decimal"
               autoComplete="off"
               enterKeyHint="go"
-              value={draft ?? formatVolume(volume_uL)}
+              value={draft ?? words(formatVolume(volume_uL))}
               aria-invalid={error !== null}
               aria-describedby={`${id}-note`}
               onChange={(event) => setDraft(event.target.value)}
@@ -84,7 +86,7 @@ export function VolumeField({ volume_uL, most_uL, limit, onChange, onAdd }: Prop
               onKeyDown={onKeyDown}
             />
             <span className="stepper-unit" aria-hidden="true">
-              mL
+              {words('mL')}
             </span>
           </label>
           <button
@@ -110,7 +112,7 @@ export function VolumeField({ volume_uL, most_uL, limit, onChange, onAdd }: Prop
           'type or step an exact volume'
         ) : (
           <>
-            <WarnIcon /> {error}
+            <WarnIcon /> {words(error)}
           </>
         )}
       </p>

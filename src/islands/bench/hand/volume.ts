@@ -43,7 +43,7 @@ export type Parsed =
 export function parseVolume(text: string): Parsed {
   const clean = text
     .trim()
-    .replace(/\s*ml$/i, '')
+    .replace(/\s*(ml|cm³|cm3)$/i, '')
     .replace(',', '.');
   if (clean === '') return { ok: false, sentence: 'Type a volume in mL, such as 1.00.' };
   if (!/^\d*\.?\d*$/.test(clean) || clean === '.') {

@@ -1,4 +1,5 @@
 import type { CSSProperties, ReactNode } from 'react';
+import { useWords } from '../../words';
 import { FLOOR_MM } from '../glass/shape';
 import { STIRRER_MM } from '../glass/tools';
 import { narrowLayout, wideLayout } from './layout';
@@ -93,6 +94,7 @@ function Band({ row, wideRows, narrowRows }: { row: number; wideRows: number; na
 
 /** A dotted line between two equal glasses whose levels stand equally high. */
 export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook }) {
+  const words = useWords();
   const same =
     left.level_mm !== null &&
     left.volume_uL !== null &&
@@ -106,7 +108,7 @@ export function LevelLine({ left, right }: { left: VesselLook; right: VesselLook
       style={{ '--level': left.level_mm! + FLOOR_MM + (left.stirrer ? STIRRER_MM : 0) } as CSSProperties}
       aria-hidden="true"
     >
-      <span>{formatMl(left.volume_uL!)} each</span>
+      <span>{words(formatMl(left.volume_uL!))} each</span>
     </span>
   );
 }

@@ -1,5 +1,6 @@
 import { useDroppable } from '@dnd-kit/core';
 import { useRef, type CSSProperties, type KeyboardEvent, type PointerEvent, type ReactNode } from 'react';
+import { useWords } from '../../words';
 import { Bottle, type BottleLook } from '../glass/Bottle';
 import { Glass, measure } from '../glass/Glass';
 import type { Paint } from '../glass/light';
@@ -88,6 +89,7 @@ export function Station(props: StationProps) {
     },
   };
 
+  const words = useWords();
   const fall = `M ${entryX} ${-rim - OVER_RIM_MM} V ${-(vessel.level_mm ?? 0) + 0.6}`;
   const frame = measure(vessel.shape);
   const lip = {
@@ -196,7 +198,7 @@ export function Station(props: StationProps) {
       <Tag vessel={vessel} side={tagSide} settling={props.settling} />
       {props.beside}
       <span id={says} hidden>
-        {describeVessel(vessel)}
+        {words(describeVessel(vessel))}
       </span>
     </div>
   );

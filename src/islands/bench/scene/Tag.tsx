@@ -1,3 +1,4 @@
+import { useWords } from '../../words';
 import type { VesselLook } from './looks';
 
 /** A reading tag: pH large, then the colour as a chip and a word. It hangs from its glass by a leader line. */
@@ -10,6 +11,7 @@ export function Tag({
   side: 'left' | 'right' | 'under';
   settling: boolean;
 }) {
+  const words = useWords();
   if (vessel.level_mm === null && vessel.ph.kind === 'none') {
     return (
       <div className="tag" data-side={side}>
@@ -39,7 +41,9 @@ export function Tag({
       {/* The turning bar says it; where nothing may move, words do. */}
       {vessel.stirring && <p className="tag-quiet still-words">stirring</p>}
       {side !== 'under' && <span className="leader" aria-hidden="true" />}
-      {vessel.temperature_C !== null && <p className="tag-quiet">{vessel.temperature_C.toFixed(1)} °C</p>}
+      {vessel.temperature_C !== null && (
+        <p className="tag-quiet">{words(vessel.temperature_C.toFixed(1))} °C</p>
+      )}
     </div>
   );
 }

@@ -75,6 +75,18 @@ function shelfLook(spec: BenchSpec, reading: BottleReading, hazards: readonly st
   };
 }
 
+type Words = (text: string) => string;
+
+const inWords = (look: VesselLook, words: Words): VesselLook => ({
+  ...look,
+  ph: look.ph.kind === 'value' ? { kind: 'value', text: words(look.ph.text) } : look.ph,
+  full: look.full && { ...look.full, text: words(look.full.text) },
+});
+const inStrength = (look: ShelfLook, words: Words): ShelfLook => ({
+  ...look,
+  strength: words(look.strength),
+});
+
 export interface Looks {
   readonly vessels: readonly VesselLook[];
   readonly shelf: readonly ShelfLook[];
@@ -84,10 +96,12 @@ export interface Looks {
  * Readings as they are to be drawn. What reads the same keeps its object, so that still vessels and bottles are not drawn
  * again while another one fills.
  * @param hazardsOf the marks that a bottle's concentration carries
+ * @param words puts what is read into the reader's conventions
  */
 export function createLooks(
   spec: BenchSpec,
   hazardsOf: (item: ShelfItem) => readonly string[],
+  words: Words = (text) => text,
 ): (readings: Readings) => Looks {
   const known = new Map<string, { readonly text: string; readonly look: VesselLook | ShelfLook }>();
   const hazards = new Map(spec.shelf.map((item) => [item.id, hazardsOf(item)]));
@@ -101,10 +115,12 @@ export function createLooks(
   };
   return (readings) => ({
     vessels: readings.vessels.map((reading) =>
-      stable(`vessel ${reading.id}`, reading, () => vesselLook(spec, reading)),
+      stable(`vessel ${reading.id}`, reading, () => inWords(vesselLook(spec, reading), words)),
     ),
     shelf: readings.bottles.map((reading) =>
-      stable(`bottle ${reading.id}`, reading, () => shelfLook(spec, reading, hazards.get(reading.id) ?? [])),
+      stable(`bottle ${reading.id}`, reading, () =>
+        inStrength(shelfLook(spec, reading, hazards.get(reading.id) ?? []), words),
+      ),
     ),
   });
 }

@@ -1,4 +1,5 @@
 import { memo } from 'react';
+import { useWords } from '../../words';
 import { DoneIcon, OpenIcon, UnderWayIcon } from '../scene/icons';
 
 export interface AimLook {
@@ -17,6 +18,7 @@ const STATE_WORDS = {
 } as const;
 
 export const Aims = memo(function Aims({ aims }: { aims: readonly AimLook[] }) {
+  const words = useWords();
   return (
     <section className="part" aria-labelledby={undefined}>
       <h3>Aims</h3>
@@ -26,7 +28,7 @@ export const Aims = memo(function Aims({ aims }: { aims: readonly AimLook[] }) {
             {aim.state === 'met' ? <DoneIcon /> : aim.state === 'open' ? <OpenIcon /> : <UnderWayIcon />}
             <span className="visually-hidden">{STATE_WORDS[aim.state]}: </span>
             <span className="aim-text">{aim.text}</span>
-            <span className="aim-note">{aim.note}</span>
+            <span className="aim-note">{words(aim.note)}</span>
           </li>
         ))}
       </ul>

@@ -1,5 +1,6 @@
 import { ledger } from '../../../bench/views/amounts';
 import type { BenchState, Seen } from '../../../bench/types';
+import { useWords } from '../../words';
 import { chemicalName, withChemicalNames } from './chemicalName';
 
 interface Props {
@@ -12,6 +13,7 @@ const mmol = (value: number): string => value.toFixed(3).replace('-', '\u2212');
 
 /** Amounts before and after the last addition that still stands, as a table. */
 export default function MoleLedger({ state, vessel, seen }: Props) {
+  const words = useWords();
   const found = ledger(state, vessel, seen);
   const label =
     state.scene.vessels[vessel]?.label ??
@@ -43,19 +45,19 @@ export default function MoleLedger({ state, vessel, seen }: Props) {
               {found.rows.map((row) => (
                 <tr key={row.species}>
                   <th scope="row">{chemicalName(row.species)}</th>
-                  <td className="number">{mmol(row.before_mmol)}</td>
+                  <td className="number">{words(mmol(row.before_mmol))}</td>
                   <td className="number">
                     {row.change_mmol > 0 ? '+' : ''}
-                    {mmol(row.change_mmol)}
+                    {words(mmol(row.change_mmol))}
                   </td>
-                  <td className="number">{mmol(row.after_mmol)}</td>
+                  <td className="number">{words(mmol(row.after_mmol))}</td>
                 </tr>
               ))}
             </tbody>
           </table>
           <p className="says">
             {withChemicalNames(
-              found.sentence,
+              words(found.sentence),
               found.rows.map((row) => row.species),
             )}
           </p>

@@ -1,4 +1,5 @@
 import { memo, useState } from 'react';
+import { useWords } from '../../words';
 
 export interface NoteLook {
   readonly key: string;
@@ -25,6 +26,7 @@ export const NotebookTable = memo(function NotebookTable({
   notes: readonly NoteLook[];
   moved: boolean;
 }) {
+  const words = useWords();
   const [all, setAll] = useState(false);
   const hiddenCount = all ? 0 : Math.max(0, notes.length - SHOWN_FIRST);
   const shown = notes.slice(hiddenCount);
@@ -48,7 +50,7 @@ export const NotebookTable = memo(function NotebookTable({
               What
             </th>
             <th scope="col" className="number">
-              Added, mL
+              {words('Added, mL')}
             </th>
             <th scope="col" className="number">
               pH
@@ -66,11 +68,11 @@ export const NotebookTable = memo(function NotebookTable({
               <td className="wide-only line-number">{note.n === 0 ? '' : note.n}</td>
               <th scope="row">{note.vessel}</th>
               <td className="wide-only">
-                {note.struck ? <s>{note.what}</s> : note.what}
+                {note.struck ? <s>{words(note.what)}</s> : words(note.what)}
                 {note.struck && <span className="struck-word"> taken back</span>}
               </td>
-              <td className="number">{note.struck ? <s>{note.added}</s> : note.added}</td>
-              <td className="number">{note.struck ? '' : note.ph}</td>
+              <td className="number">{note.struck ? <s>{words(note.added)}</s> : words(note.added)}</td>
+              <td className="number">{note.struck ? '' : words(note.ph)}</td>
               <td>
                 {!note.struck && note.words !== '' && (
                   <span className="with-chip">

@@ -1,4 +1,5 @@
 import { memo, useId } from 'react';
+import { useWords } from '../../words';
 import { useWidth } from './useWidth';
 
 export interface PairLook {
@@ -21,6 +22,7 @@ const MOST_ACID = 10 / 11;
 
 /** Weak acid and conjugate base in mmol as one stacked bar, with the room that is left on both sides. */
 export const PairBar = memo(function PairBar({ pair }: { pair: PairLook | null }) {
+  const words = useWords();
   const [ref, width] = useWidth<HTMLDivElement>(560);
   return (
     <section className="part">
@@ -32,12 +34,14 @@ export const PairBar = memo(function PairBar({ pair }: { pair: PairLook | null }
           <p className="empty">No weak acid with its partner stands on this bench yet.</p>
         )}
       </div>
-      {pair && <p className="says">{pair.sentence}</p>}
+      {pair && <p className="says">{words(pair.sentence)}</p>}
     </section>
   );
 });
 
 function Bar({ pair, width }: { pair: PairLook; width: number }) {
+  const say = useWords();
+  const amount = (mmol: number) => say(three(mmol));
   const hatch = useId();
   const total = pair.acid_mmol + pair.base_mmol;
   const share = total === 0 ? 0.5 : pair.acid_mmol / total;
@@ -49,12 +53,12 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
   // What strong base or acid turns over before one partner is ten times the other, that is, before the pH leaves pKa ± 1.
   const roomForBase = pair.acid_mmol - total * LEAST_ACID;
   const roomForAcid = pair.base_mmol - total * (1 - MOST_ACID);
-  const acidText = `${pair.acid} ${three(pair.acid_mmol)}`;
-  const baseText = `${pair.base} ${three(pair.base_mmol)}`;
+  const acidText = `${pair.acid} ${amount(pair.acid_mmol)}`;
+  const baseText = `${pair.base} ${amount(pair.base_mmol)}`;
   const acidRoom = now - 10 > acidText.length * 11;
   const baseWide = baseText.length * 11 + 12;
   const baseRoom = width - now - 10 > baseWide;
-  const words = `${pair.acid} ${three(pair.acid_mmol)} mmol and ${pair.base} ${three(pair.base_mmol)} mmol. ${pair.sentence}`;
+  const words = `${pair.acid} ${amount(pair.acid_mmol)} mmol and ${pair.base} ${amount(pair.base_mmol)} mmol. ${say(pair.sentence)}`;
   return (
     <svg className="figure" width={width} height={128} role="img" aria-label={words}>
       <defs>
@@ -121,8 +125,8 @@ function Bar({ pair, width }: { pair: PairLook; width: number }) {
         />
       )}
       <line className="pair-now" x1={now} x2={now} y1={24} y2={84} />
-      <Bracket from={least} to={now} text={`${three(roomForBase)} base`} width={width} />
-      <Bracket from={now} to={most} text={`${three(roomForAcid)} acid`} width={width} />
+      <Bracket from={least} to={now} text={`${amount(roomForBase)} base`} width={width} />
+      <Bracket from={now} to={most} text={`${amount(roomForAcid)} acid`} width={width} />
     </svg>
   );
 }

@@ -1,4 +1,5 @@
 import { memo } from 'react';
+import { useWords } from '../../words';
 import { useWidth } from './useWidth';
 
 export interface TracePoint {
@@ -30,6 +31,7 @@ const DASHES = ['', '6 4', '2 4', '10 4 2 4'];
 
 /** pH against volume added. Vessels differ by line and point shape; points hold the computed colours. */
 export const Trace = memo(function Trace({ series, aims, strip, added, absent }: TraceProps) {
+  const words = useWords();
   const [ref, width] = useWidth<HTMLDivElement>(372);
   const drawn = series.filter((one) => one.points.length > 0);
   return (
@@ -42,12 +44,13 @@ export const Trace = memo(function Trace({ series, aims, strip, added, absent }:
           <Figure width={width} series={drawn} aims={aims} strip={strip} added={added} />
         )}
       </div>
-      {absent === null && drawn.length > 0 && <p className="says">{say(drawn)}</p>}
+      {absent === null && drawn.length > 0 && <p className="says">{words(say(drawn))}</p>}
     </section>
   );
 });
 
 function Figure({ width, series, aims, strip, added }: Omit<TraceProps, 'absent'> & { width: number }) {
+  const words = useWords();
   const height = 360;
   const left = strip.length > 0 ? 58 : 36;
   const right = width - 12;
@@ -66,7 +69,7 @@ function Figure({ width, series, aims, strip, added }: Omit<TraceProps, 'absent'
   const columns: number[] = [];
   for (let v = 0; v <= most + 1e-9; v += step) columns.push(v);
   return (
-    <svg className="figure" width={width} height={height} role="img" aria-label={say(series)}>
+    <svg className="figure" width={width} height={height} role="img" aria-label={words(say(series))}>
       <text className="figure-unit" x={left - 14} y={14} textAnchor="end">
         pH
       </text>
@@ -91,18 +94,18 @@ function Figure({ width, series, aims, strip, added }: Omit<TraceProps, 'absent'
         <g key={v}>
           <line className="figure-tick" x1={x(v)} x2={x(v)} y1={bottom} y2={bottom + 6} />
           <text className="figure-number" x={x(v)} y={bottom + 22} textAnchor="middle">
-            {Number(v.toFixed(2))}
+            {words(String(Number(v.toFixed(2))))}
           </text>
         </g>
       ))}
       <text className="figure-words" x={right} y={bottom + 42} textAnchor="end">
-        {added}
+        {words(added)}
       </text>
       {aims.map((aim) => (
         <g key={aim}>
           <line className="figure-aim" x1={left} x2={right} y1={y(aim)} y2={y(aim)} />
           <text className="figure-aim-words" x={right} y={y(aim) + 16} textAnchor="end">
-            aim {aim.toFixed(2)}
+            aim {words(aim.toFixed(2))}
           </text>
         </g>
       ))}

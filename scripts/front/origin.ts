@@ -8,9 +8,13 @@ const KNOWN = new Set([...SAFE, 'POST', 'PUT', 'PATCH', 'DELETE']);
 
 export const isSafe = (method: string | undefined): boolean => SAFE.has(method ?? '');
 
-export function refuseMethod(method: string | undefined): Refusal | undefined {
-  if (KNOWN.has(method ?? '')) return undefined;
-  const headers = { Allow: [...KNOWN].join(', ') };
+/** A page is got, or a form is posted to it; endpoints decide for themselves what they take. */
+const OF_PAGES = new Set([...SAFE, 'POST']);
+
+export function refuseMethod(method: string | undefined, endpoint: boolean): Refusal | undefined {
+  const taken = endpoint ? KNOWN : OF_PAGES;
+  if (taken.has(method ?? '')) return undefined;
+  const headers = { Allow: [...taken].join(', ') };
   return { status: 405, code: 'method-not-allowed', title: 'This address takes no such request.', headers };
 }
 

@@ -58,7 +58,12 @@ export function createFront(parts: FrontParts): Front {
   const { settings, handler, askReadiness, log, instance = randomUUID(), bodyPatience_ms = BODY_MS } = parts;
   const assets = createAssets(parts.client);
   // Brotli's fourth level costs a page a fraction of a millisecond, and is smaller than gzip's best.
-  const compress = compression({ threshold: 1024 });
+  // An endpoint's error is written anew under its head, below the compressor: it must not have begun by then.
+  const compress = compression({
+    threshold: 1024,
+    filter: (request, response) =>
+      !(isEndpoint(request.url ?? '') && response.statusCode >= 400) && compression.filter(request, response),
+  });
   const state = { draining: false, ask: askReadiness, instance };
 
   async function answer(request: IncomingMessage, response: ServerResponse): Promise<void> {
@@ -96,7 +101,7 @@ export function createFront(parts: FrontParts): Front {
       refuse(response, refusal, requestId, request.headers.accept);
     };
 
-    const wrongMethod = refuseMethod(method);
+    const wrongMethod = refuseMethod(method, isEndpoint(path));
     if (wrongMethod) return refuseWith(wrongMethod);
     if ('refusal' in target) return refuseWith(target.refusal);
     if (await answerHealth(path, response, state)) return;

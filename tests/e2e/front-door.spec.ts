@@ -97,6 +97,14 @@ test('an endpoint’s error is Problem Details', async () => {
   });
 });
 
+test('an endpoint’s error reads the same whatever encodings are accepted', async ({ request }) => {
+  for (const encodings of ['identity', 'gzip', 'br', 'gzip, deflate, br, zstd'])
+    for (const path of ['/api/answers', '/api/runs', '/api/nowhere']) {
+      const answer = await request.get(path, { headers: { 'Accept-Encoding': encodings } });
+      expect(await answer.json(), `${path} ${encodings}`).toMatchObject({ status: answer.status() });
+    }
+});
+
 test('pages are compressed and name their character set', async () => {
   const { headers } = await send('GET /', { 'Accept-Encoding': 'br' });
   expect(headers['content-encoding']).toBe('br');

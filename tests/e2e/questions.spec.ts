@@ -326,6 +326,22 @@ test('with an account: the server keeps answers, another browser shows them, the
   await elsewhere.close();
 });
 
+test('what was written before signing in is offered, not assumed', async ({ page, mailTo }) => {
+  test.setTimeout(90_000);
+  await at(page, 'tell-ilse');
+  await field(page, 'tell-ilse').fill('It ends when one partner is used up.');
+  const person = newPerson('Pia Skerry');
+  await signUp(page, mailTo, person);
+  await signIn(page, person, LESSON);
+  await at(page, 'tell-ilse');
+  await expect(question(page, 'tell-ilse')).toContainText('before you signed in. Is it yours?');
+  await expect(field(page, 'tell-ilse')).toHaveValue('');
+  await question(page, 'tell-ilse').getByRole('button', { name: 'It is mine' }).click();
+  await expect(field(page, 'tell-ilse')).toHaveValue('It ends when one partner is used up.');
+  await check(page, 'tell-ilse', /^Show/);
+  await expect(question(page, 'tell-ilse')).toContainText('One good answer');
+});
+
 test('numbers and units are written as the reader chose: in prose, questions, feedback and on the bench', async ({
   page,
   mailTo,

@@ -69,6 +69,19 @@ function Card({ spec, given }: Omit<Props, 'conventions'>) {
       <p className="tape tape-ink question-kind" id={`${spec.id}-kind`}>
         {KIND[spec.kind]}
       </p>
+      {view.stranger && (
+        <div className="question-stranger" role="group" aria-label="Is this yours?">
+          <p>This question was answered in this browser before you signed in. Is it yours?</p>
+          <p className="question-row">
+            <button type="button" className="action" onClick={() => work.claim(true)}>
+              It is mine
+            </button>
+            <button type="button" className="action" onClick={() => work.claim(false)}>
+              It is not
+            </button>
+          </p>
+        </div>
+      )}
       <form onSubmit={submit} noValidate>
         <Html html={spec.ask} className="question-ask" id={ask} />
         {spec.kind === 'choice' && draft.kind === 'choice' && (

@@ -47,6 +47,8 @@ export const loadQuestion = (key: string): QuestionRecord | null =>
 export const keepQuestion = (key: string, record: QuestionRecord): void =>
   quietly(() => localStorage.setItem(key, JSON.stringify(record)), undefined);
 
+export const forgetQuestion = (key: string): void => quietly(() => localStorage.removeItem(key), undefined);
+
 /** How many answers of a person this browser holds that the server does not have. */
 export const countUnsentAnswers = (person: string): number =>
   quietly(

@@ -2,7 +2,7 @@ import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Answer, Marking } from '../../lessons/questions/types';
 import { tellDone } from '../bench/sync/done';
 import { post, Refused, Unreachable } from '../bench/sync/server';
-import { keepQuestion, keyOf, loadQuestion, type MarkedAnswer, type Pending } from './local';
+import { forgetQuestion, keepQuestion, keyOf, loadQuestion, type MarkedAnswer, type Pending } from './local';
 
 const FIRST_RETRY_MS = 1000;
 const LONGEST_RETRY_MS = 30_000;
@@ -28,6 +28,8 @@ export interface QuestionView {
   readonly done: boolean;
   /** A sentence that has to be read: why an answer was not taken. */
   readonly word: string | null;
+  /** What somebody wrote here before this person signed in; perhaps somebody else. */
+  readonly stranger: Answer | null;
 }
 
 export interface QuestionWork {
@@ -36,6 +38,8 @@ export interface QuestionWork {
   submit(answer: Answer): void;
   /** Changes one's mind about an answer that could not be sent yet. */
   takeBack(): void;
+  /** Answers 'is this yours?': what is, is taken over as a draft; what is not, is forgotten. */
+  claim(mine: boolean): void;
   start(): () => void;
 }
 
@@ -49,6 +53,7 @@ interface Marked {
 export function createQuestionWork(given: GivenQuestion): QuestionWork {
   const { lesson, revision, question, person } = given;
   const key = keyOf(person, lesson, question);
+  const visitorKey = keyOf(null, lesson, question);
   let pending: Pending | null = null;
   let retry_ms = FIRST_RETRY_MS;
   let timer: ReturnType<typeof setTimeout> | undefined;
@@ -61,6 +66,7 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
     askedBack: null,
     done: given.done,
     word: null,
+    stranger: null,
   }));
   const show = (part: Partial<QuestionView>) => store.setState(part);
   const keep = () => {
@@ -78,6 +84,7 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
 
   function load(): void {
     const found = loadQuestion(key);
+    if (!found && person !== null && !given.marked && !touched) show({ stranger: strangersDraft() });
     if (!found) return;
     // Another revision may ask for something else: what was said to the old one does not stand below it.
     const same = found.revision === revision;
@@ -89,6 +96,13 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
     });
     if (store.getState().done) tellDone([question]);
     if (pending) void send();
+  }
+
+  /** Words and choices mean the same to everyone; numbers and orders differ from learner to learner. */
+  function strangersDraft(): Answer | null {
+    const draft = loadQuestion(visitorKey)?.draft;
+    if (draft?.kind === 'choice' && draft.chosen.length > 0) return draft;
+    return draft?.kind === 'explain' && draft.text !== '' ? { kind: 'explain', text: draft.text } : null;
   }
 
   async function send(): Promise<void> {
@@ -153,6 +167,15 @@ export function createQuestionWork(given: GivenQuestion): QuestionWork {
       pending = null;
       retry_ms = FIRST_RETRY_MS;
       show({ phase: 'open', word: null });
+      keep();
+    },
+    claim(mine) {
+      const { stranger } = store.getState();
+      forgetQuestion(visitorKey);
+      show({ stranger: null });
+      if (!mine || !stranger) return;
+      touched = true;
+      show({ draft: stranger });
       keep();
     },
     start() {

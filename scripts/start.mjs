@@ -21,8 +21,24 @@ const say = (line) => console.log(line);
 
 class Expected extends Error {}
 
-/** Fails in words where somebody else listens already. */
-function checkPort() {
+/**
+ * Fails in words where somebody else listens already.
+ * @param {number} patience_ms a process that has just ended may hold its port a moment longer than its id
+ */
+async function checkPort(patience_ms) {
+  const until = Date.now() + patience_ms;
+  for (;;) {
+    try {
+      return await tryPort();
+    } catch (error) {
+      if (Date.now() >= until) throw error;
+      await sleep(50);
+    }
+  }
+}
+
+/** @returns {Promise<void>} */
+function tryPort() {
   if (!Number.isInteger(PORT) || PORT < 1 || PORT > 65_535)
     throw new Expected(`PORT is “${process.env.PORT}”, which is no port: give a number from 1 to 65535.`);
   return new Promise((resolve, reject) => {
@@ -35,7 +51,7 @@ function checkPort() {
         ),
       );
     });
-    probe.listen(PORT, process.env.HOST, () => probe.close(resolve));
+    probe.listen(PORT, process.env.HOST, () => probe.close(() => resolve()));
   });
 }
 
@@ -154,7 +170,7 @@ async function start() {
   undo.push(() => processes.endAll());
   const orphans = await processes.endOrphans();
   if (orphans > 0) say('Ended what an earlier start had left running');
-  await checkPort();
+  await checkPort(orphans > 0 ? 5000 : 0);
   await requirePackages();
   const demo = await requireSecrets();
 

@@ -416,6 +416,21 @@ test.describe('on a phone', () => {
     const first = (await order(page, 'drop-by-drop'))[0]!;
     await question(page, 'drop-by-drop').getByRole('button', { name: 'Move down' }).first().tap();
     await expect.poll(async () => (await order(page, 'drop-by-drop'))[1]).toBe(first);
+    // By a finger on the grip: the third to the top.
+    const third = (await order(page, 'drop-by-drop'))[2]!;
+    const items = question(page, 'drop-by-drop').locator('.question-item');
+    await items.nth(1).evaluate((item) => item.scrollIntoView({ block: 'center' }));
+    const grip = (await items.nth(2).locator('.question-grip').boundingBox())!;
+    const top = (await items.nth(0).boundingBox())!;
+    const finger = await page.context().newCDPSession(page);
+    const touch = (type: 'touchStart' | 'touchMove', y: number) =>
+      finger.send('Input.dispatchTouchEvent', { type, touchPoints: [{ x: grip.x + grip.width / 2, y }] });
+    const [from, to] = [grip.y + grip.height / 2, top.y + top.height / 2];
+    await touch('touchStart', from);
+    for (let step = 1; step <= 8; step++) await touch('touchMove', from + ((to - from) * step) / 8);
+    await expect(items.nth(2)).toHaveAttribute('data-carried');
+    await finger.send('Input.dispatchTouchEvent', { type: 'touchEnd', touchPoints: [] });
+    await expect.poll(async () => (await order(page, 'drop-by-drop'))[0]).toBe(third);
     await check(page, 'drop-by-drop');
     await expect(feedback(page, 'drop-by-drop')).toBeVisible();
     await at(page, 'acid-in');

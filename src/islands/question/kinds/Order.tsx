@@ -1,4 +1,5 @@
 import {
+  closestCenter,
   DndContext,
   PointerSensor,
   pointerWithin,
@@ -6,6 +7,7 @@ import {
   useDroppable,
   useSensor,
   useSensors,
+  type CollisionDetection,
 } from '@dnd-kit/core';
 import { useLayoutEffect, useState } from 'react';
 import type { Answer } from '../../../lessons/questions/types';
@@ -34,6 +36,12 @@ const SILENT = {
 };
 const SENSOR = { activationConstraint: { distance: 4 } };
 
+/** The item under the hand; above, below and between them the nearest one. */
+const underHand: CollisionDetection = (args) => {
+  const hit = pointerWithin(args);
+  return hit.length > 0 ? hit : closestCenter(args);
+};
+
 /** A list to be put in order: by buttons and keys, or by dragging an item at its grip to another one's place. */
 export function Order({ spec, draft, labelledBy, fixed, misplaced, onDraft, say }: Props) {
   const { order } = draft;
@@ -52,7 +60,7 @@ export function Order({ spec, draft, labelledBy, fixed, misplaced, onDraft, say 
   return (
     <DndContext
       sensors={sensors}
-      collisionDetection={pointerWithin}
+      collisionDetection={underHand}
       accessibility={SILENT}
       onDragEnd={({ active, over }) => {
         setFocus(null);

@@ -162,6 +162,7 @@ test('a number: asked back, poured beside the asked-for tube, told at the third 
   await field(page, 'acid-in').fill(key.replace('.', ','));
   await check(page, 'acid-in');
   await expect(feedback(page, 'acid-in')).toContainText('Right.');
+  await expect(feedback(page, 'acid-in').locator('.question-verdict')).toBeFocused();
   await expect(isDone(page, 'acid-in')).toHaveCount(1);
   await expect(page.locator('[data-done-words]')).toHaveText(/^1 of \d+ done$/);
 });

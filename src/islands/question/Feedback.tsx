@@ -10,7 +10,7 @@ export function Feedback({ spec, marking }: { spec: QuestionForLearner; marking:
   const right = verdict === 'right';
   return (
     <div className="question-feedback">
-      <p className="question-verdict">
+      <p className="question-verdict" tabIndex={-1}>
         {right ? <DoneIcon /> : <NoteIcon />}
         {headOf(spec, marking)}
       </p>

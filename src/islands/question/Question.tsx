@@ -1,4 +1,4 @@
-import { useEffect, useState, type FormEvent } from 'react';
+import { useEffect, useRef, useState, type FormEvent } from 'react';
 import { useStore } from 'zustand';
 import { USUAL, type Conventions } from '../../lessons/conventions';
 import type { Answer, QuestionForLearner } from '../../lessons/questions/types';
@@ -54,6 +54,14 @@ function Card({ spec, given }: Omit<Props, 'conventions'>) {
   const draft = draftFor(spec, view.draft);
   const answered = marked?.marking.verdict === 'right';
   const fixed = answered || phase !== 'open';
+  // The button goes with the right answer, and with it the focus of whoever pressed it: on to what was said.
+  const card = useRef<HTMLElement>(null);
+  const wasAnswered = useRef(answered);
+  useEffect(() => {
+    if (answered && !wasAnswered.current && document.activeElement === document.body)
+      card.current?.querySelector<HTMLElement>('.question-verdict')?.focus({ preventScroll: true });
+    wasAnswered.current = answered;
+  }, [answered]);
   const ask = `${spec.id}-ask`;
   const onDraft = (next: Answer) => work.edit(next);
   const submit = (event: FormEvent) => {
@@ -65,7 +73,12 @@ function Card({ spec, given }: Omit<Props, 'conventions'>) {
       ? stillMisplaced(draft, marked?.answer, marked?.marking.misplaced ?? [])
       : new Set<string>();
   return (
-    <section className="question porcelain" id={spec.id} aria-labelledby={`${spec.id}-kind ${ask}`}>
+    <section
+      ref={card}
+      className="question porcelain"
+      id={spec.id}
+      aria-labelledby={`${spec.id}-kind ${ask}`}
+    >
       <p className="tape tape-ink question-kind" id={`${spec.id}-kind`}>
         {KIND[spec.kind]}
       </p>

@@ -41,7 +41,9 @@ export function Explain({ draft, labelledBy, fixed, marking, askedBack, onDraft 
         aria-invalid={askedBack ? true : undefined}
         onChange={(event) => onDraft({ ...draft, text: event.target.value })}
       />
-      <div id={`${id}-back`}>{askedBack && <Html as="p" className="fault" html={askedBack.feedback} />}</div>
+      <div id={`${id}-back`} role="alert">
+        {askedBack && <Html as="p" className="fault" html={askedBack.feedback} />}
+      </div>
       {marking?.solution && (
         <div className="question-model">
           <p className="question-label">One good answer</p>

@@ -56,7 +56,9 @@ export function Numeric({ spec, draft, labelledBy, fixed, askedBack, onDraft }: 
       <p className="question-hint" id={`${id}-hint`}>
         {spec.hint}
       </p>
-      <div id={`${id}-back`}>{askedBack && <Html as="p" className="fault" html={askedBack.feedback} />}</div>
+      <div id={`${id}-back`} role="alert">
+        {askedBack && <Html as="p" className="fault" html={askedBack.feedback} />}
+      </div>
     </>
   );
 }

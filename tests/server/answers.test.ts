@@ -173,7 +173,14 @@ test('a flood of answers from one account is held up, with when to go on', async
 test('answers are in a person’s export and go with the account', async () => {
   await give('which', chosen('salt'));
   expect((await exportPerson(person.id)).answers).toMatchObject([
-    { lesson: 'two-beakers', question: 'which', attempt: 1, verdict: 'not-yet' },
+    {
+      lesson: 'two-beakers',
+      question: 'which',
+      attempt: 1,
+      verdict: 'not-yet',
+      answer: { kind: 'choice', chosen: ['salt'] },
+      marking: { misconceptions: ['M13'] },
+    },
   ]);
   await person.destroy();
   expect(await stored()).toEqual([]);

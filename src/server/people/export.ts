@@ -3,8 +3,13 @@ import { sequelize } from '../database/index.ts';
 
 /** Everything that is held about a person, as plain data. Secrets (password hash, token hashes) are left out. */
 export async function exportPerson(personId: number): Promise<Record<string, unknown>> {
-  const all = (query: string) =>
-    sequelize.query<Record<string, unknown>>(query, { replacements: { personId }, type: QueryTypes.SELECT });
+  const all = async (query: string) => {
+    const rows = await sequelize.query<Record<string, unknown>>(query, {
+      replacements: { personId },
+      type: QueryTypes.SELECT,
+    });
+    return rows.map(readable);
+  };
   const [person] = await all(
     'SELECT public_id, email, email_verified_at, display_name, lang, conventions, created_at, updated_at FROM people WHERE id = :personId',
   );
@@ -40,4 +45,18 @@ export async function exportPerson(personId: number): Promise<Record<string, unk
     ),
     log: await all('SELECT at, action FROM audit_log WHERE subject_id = :personId ORDER BY id'),
   };
+}
+
+/** Columns that hold JSON, which some drivers hand over as text: the file says it as data. */
+const JSON_COLUMNS: ReadonlySet<string> = new Set(['conventions', 'move', 'shown', 'answer', 'marking']);
+
+function readable(row: Record<string, unknown>): Record<string, unknown> {
+  return Object.fromEntries(
+    Object.entries(row).map(([name, value]) =>
+      // A prediction's answer is the id of an option, and no JSON.
+      JSON_COLUMNS.has(name) && typeof value === 'string' && /^[[{]/.test(value)
+        ? [name, JSON.parse(value) as unknown]
+        : [name, value],
+    ),
+  );
 }

@@ -15,6 +15,15 @@ export function linearFromXyz(x: number, y: number, z: number): Triple {
   ];
 }
 
+/** The inverse of `linearFromXyz`: CSS Color 4 matrix. */
+export function xyzFromLinear([r, g, b]: Triple): Triple {
+  return [
+    0.4123907992659595 * r + 0.35758433938387796 * g + 0.1804807884018343 * b,
+    0.21263900587151036 * r + 0.7151686787677559 * g + 0.07219231536073371 * b,
+    0.01933081871559185 * r + 0.11919477979462599 * g + 0.9505321522496606 * b,
+  ];
+}
+
 /** Björn Ottosson, A perceptual color space for image processing (2020): linear sRGB to OKLab. */
 export function oklabFromLinear([r, g, b]: Triple): Triple {
   const l = Math.cbrt(0.4122214708 * r + 0.5363325363 * g + 0.0514459929 * b);

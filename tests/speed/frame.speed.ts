@@ -29,5 +29,5 @@ function frame(): number {
 }
 
 export const benchmarks = [
-  { name: 'frame', unit: 'µs', run: () => medianOf(frame, { count: 50, perSecond: 1e6 }) },
+  { name: 'frame', unit: 'us', run: () => medianOf(frame, { count: 50, perSecond: 1e6 }) },
 ];

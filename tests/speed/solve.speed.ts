@@ -71,12 +71,12 @@ function bisection(): number {
 export const benchmarks = [
   {
     name: 'solve',
-    unit: 'µs',
+    unit: 'us',
     run: () => medianOf(() => solve(mixture(), 'real').pH, { count: 2000, perSecond: 1e6 }),
   },
   {
     name: 'solve, plain bisection',
-    unit: 'µs',
+    unit: 'us',
     run: () => medianOf(bisection, { count: 50, perSecond: 1e6 }),
   },
 ];

@@ -12,5 +12,7 @@ declare namespace App {
     clientAddress: string;
     /** What a form that came with this request held, without secrets: shown again where it was not accepted. */
     typed: Readonly<Record<string, string>>;
+    /** Set by a page that may be kept: the name of all that it was made from. */
+    pageKey?: string;
   }
 }

@@ -1,6 +1,7 @@
 import { defineMiddleware } from 'astro:middleware';
 import { hasRole, standingOf } from './server/access/memberships.ts';
 import { ruleFor } from './server/access/rules.ts';
+import { keepPage } from './server/kept-pages.ts';
 import { log } from './server/log.ts';
 import { problemResponse } from './server/problem.ts';
 import { wholePage } from './server/whole-page.ts';
@@ -73,5 +74,10 @@ export const onRequest = defineMiddleware(async (context, next) => {
     log.error({ requestId: locals.requestId, routePattern, err: error }, 'a page could not be made'),
   );
   if (person) response.headers.set('Cache-Control', 'no-store');
+  // Nobody waits for a page to be put away.
+  if (locals.pageKey && context.request.method === 'GET')
+    keepPage(locals.pageKey, response).catch((error: unknown) =>
+      log.error({ requestId: locals.requestId, err: error }, 'a page could not be kept'),
+    );
   return response;
 });

@@ -6,7 +6,13 @@
  * @returns the same answer with its whole body, or an empty 500 that the framework turns into its error page
  */
 export async function wholePage(response: Response, onFault: (error: unknown) => void): Promise<Response> {
-  if (!response.body || !response.headers.get('content-type')?.startsWith('text/html')) return response;
+  const { headers } = response;
+  if (
+    !response.body ||
+    !headers.get('content-type')?.startsWith('text/html') ||
+    headers.has('content-encoding')
+  )
+    return response;
   try {
     const body = await response.text();
     return new Response(body, response);

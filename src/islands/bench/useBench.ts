@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { useCallback, useEffect, useState } from 'react';
 import { useStore } from 'zustand';
 import type { BenchSpec, Move, ShelfItem } from '../../bench/types';
 import { delivery } from './apron/deeds';
@@ -52,7 +52,7 @@ export function useBench(
   const [settling, settle] = usePassing<string>(SETTLE_MS);
   const [dripping, setDripping] = usePassing<{ from: string; into: string; drops: number }>(DROPPER_STAYS_MS);
   const [speak, liveRegion] = useLiveRegion();
-  const say = (message: string) => speak(words(message));
+  const say = useCallback((message: string) => speak(words(message)), [speak, words]);
 
   const lookAt = (id: string) =>
     looksOf(store.getState().readings).vessels.find((vessel) => vessel.id === id);

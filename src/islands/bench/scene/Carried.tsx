@@ -1,5 +1,4 @@
 import { useDndMonitor } from '@dnd-kit/core';
-import { useAnimate } from 'framer-motion/mini';
 import { useEffect, useRef, useState, type CSSProperties } from 'react';
 import { Bottle, BOTTLE } from '../glass/Bottle';
 import type { ShelfLook } from './looks';
@@ -11,9 +10,12 @@ interface Props {
 
 const RETURN_S = 0.2;
 
+/** Only a hand that drags needs it: fetched when the first drag begins. */
+const motion = () => import('framer-motion/dom/mini');
+
 /** The bottle that follows the pointer. It is moved by hand, without a render for each move. */
 export function Carried({ item }: Props) {
-  const [scope, animate] = useAnimate<HTMLDivElement>();
+  const scope = useRef<HTMLDivElement>(null);
   const [home, setHome] = useState<{ left: number; top: number; width: number } | null>(null);
   const [returning, setReturning] = useState<ShelfLook | null>(null);
   const free = useRef<ShelfLook | null>(null);
@@ -29,18 +31,23 @@ export function Carried({ item }: Props) {
     const still = window.matchMedia('(prefers-reduced-motion: reduce)').matches;
     if (still || !scope.current || !free.current || (x === 0 && y === 0)) return;
     setReturning(free.current);
-    animate(
-      scope.current,
-      { transform: [`translate(${x}px, ${y}px)`, 'translate(0px, 0px)'] },
-      { duration: RETURN_S, ease: 'easeOut' },
-    ).then(
-      () => setReturning(null),
-      () => setReturning(null),
-    );
+    const bottle = scope.current;
+    motion()
+      .then(({ animate }) =>
+        animate(
+          bottle,
+          { transform: [`translate(${x}px, ${y}px)`, 'translate(0px, 0px)'] },
+          { duration: RETURN_S, ease: 'easeOut' },
+        ),
+      )
+      // Without a connection it may not be there: then the bottle is home at once.
+      .catch(() => undefined)
+      .finally(() => setReturning(null));
   };
 
   useDndMonitor({
     onDragStart: (event) => {
+      void motion().catch(() => undefined);
       const rect = event.active.rect.current.initial;
       const bottle = document.querySelector(`[data-bottle="${CSS.escape(String(event.active.id))}"]`);
       const box = bottle?.getBoundingClientRect() ?? rect;

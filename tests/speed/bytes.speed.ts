@@ -1,15 +1,26 @@
 /**
  * How many bytes of JavaScript and CSS each kind of page makes a browser fetch, as they come over the wire (Brotli):
- * what the page's own HTML names, and what that imports at once. The built product is asked, so it has to be running:
- * `SITE` names it, http://127.0.0.1:4321 where it is not set.
+ * what the page's own HTML names, and what that imports at once.
  */
-const SITE = process.env.SITE ?? 'http://127.0.0.1:4321';
+import { cookiesOf, site, stopSite } from './site.ts';
 
-/** One address of each kind of page that a visitor can open. */
-const KINDS = { home: '/', rack: '/lessons', 'sign-in': '/sign-in' };
+/** One address of each kind of page, as somebody signed in opens it where that makes a difference. */
+const KINDS = {
+  home: '/',
+  text: '/how-the-numbers-are-made',
+  form: '/sign-up',
+  rack: '/lessons',
+  lesson: '/lessons/meeting-a-buffer',
+  notebook: '/notebook',
+  account: '/account',
+};
+
+let cookie: string | undefined;
 
 async function fetched(path: string): Promise<{ text: string; bytes: number }> {
-  const answer = await fetch(new URL(path, SITE), { headers: { 'accept-encoding': 'br' } });
+  const one = await site();
+  cookie ??= await cookiesOf(one, 'ikaika');
+  const answer = await fetch(new URL(path, one.address), { headers: { cookie, 'accept-encoding': 'br' } });
   if (!answer.ok) throw new Error(`${path} answered ${answer.status}`);
   return { text: await answer.text(), bytes: Number(answer.headers.get('content-length') ?? 0) };
 }
@@ -32,7 +43,8 @@ async function bytesOf(path: string, ending: '.js' | '.css'): Promise<number> {
     const { text, bytes } = await fetched(file);
     seen.set(file, bytes || Buffer.byteLength(text));
     if (ending === '.js')
-      for (const next of importsOf(text)) waiting.push(new URL(next, new URL(file, SITE)).pathname);
+      for (const next of importsOf(text))
+        waiting.push(new URL(next, new URL(file, 'http://site.invalid')).pathname);
   }
   return [...seen.values()].reduce((sum, bytes) => sum + bytes, 0);
 }
@@ -44,3 +56,5 @@ export const benchmarks = Object.entries(KINDS).flatMap(([kind, path]) =>
     run: async () => ({ median: await bytesOf(path, ending), samples: 1 }),
   })),
 );
+
+export const finish = stopSite;

@@ -23,7 +23,8 @@ async function requestsPerSecond(url: string, cookie: string): Promise<number> {
     duration: SECONDS,
     headers: { cookie, accept: 'text/html', 'accept-encoding': 'br' },
   });
-  if (result.non2xx > 0 || result.errors > 0) throw new Error(`${url}: ${result.non2xx} other answers, ${result.errors} errors`);
+  if (result.non2xx > 0 || result.errors > 0)
+    throw new Error(`${url}: ${result.non2xx} other answers, ${result.errors} errors`);
   return result.requests.average;
 }
 

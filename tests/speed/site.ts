@@ -70,7 +70,10 @@ export async function stopSite(): Promise<void> {
 }
 
 export const secretsOf = (one: Site): { secret: string; databasePassword: string } =>
-  JSON.parse(readFileSync(join(one.folder, 'demo.json'), 'utf8')) as { secret: string; databasePassword: string };
+  JSON.parse(readFileSync(join(one.folder, 'demo.json'), 'utf8')) as {
+    secret: string;
+    databasePassword: string;
+  };
 
 /** Signs in as somebody of the demo and answers with the cookies. */
 export async function cookiesOf(one: Site, key: string): Promise<string> {

@@ -177,12 +177,15 @@ async function start() {
   const database = { database: 'dropwise', user: 'dropwise', password: demo.databasePassword };
   const startDatabase = () =>
     startMariadb({ folder: join(DATA, 'mariadb'), port: demo.databasePort, ...database, say });
-  let mariadb = await startDatabase();
-  undo.unshift(() => mariadb.stop());
+  // Known before it is up: a stop that comes while it starts waits for it, and ends it.
+  let starting = startDatabase();
+  undo.unshift(async () => (await starting.catch(() => undefined))?.stop());
+  let mariadb = await starting;
   watchDatabase(
     () => mariadb.pid,
     async () => {
-      mariadb = await startDatabase();
+      starting = startDatabase();
+      mariadb = await starting;
     },
   );
 

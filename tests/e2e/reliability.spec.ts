@@ -2,9 +2,9 @@
 import type { APIRequestContext } from '@playwright/test';
 import { spawn, type ChildProcess } from 'node:child_process';
 import { randomUUID } from 'node:crypto';
-import { readFileSync } from 'node:fs';
+import { readdirSync, readFileSync } from 'node:fs';
 import { rm } from 'node:fs/promises';
-import { join } from 'node:path';
+import { join, resolve } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { demoPassword } from '../../src/server/demo/passwords.ts';
 import { emailOf, PEOPLE } from '../../src/server/demo/people.ts';
@@ -15,9 +15,13 @@ const OWN_PORT = PORT + 7;
 const OWN_SITE = `http://127.0.0.1:${OWN_PORT}`;
 const FOLDER = '.data/e2e-killed';
 const LESSON = 'meeting-a-buffer';
-const MOVES_A_ROUND = 60;
+const ROUNDS = 10;
+const MOVES_A_ROUND = 24;
 
 let starter: ChildProcess | undefined;
+
+/** What the starter has said since it was started last. */
+let said = '';
 
 /** `npm start` of its own, from the build that is there; resolves when it says that it is ready. */
 async function start(): Promise<void> {
@@ -26,7 +30,7 @@ async function start(): Promise<void> {
     stdio: ['ignore', 'pipe', 'pipe'],
   });
   starter = child;
-  let said = '';
+  said = '';
   await new Promise<void>((resolve, reject) => {
     const hear = (chunk: Buffer) => {
       said += chunk.toString();
@@ -72,7 +76,7 @@ async function signedIn(client: APIRequestContext): Promise<void> {
 test('web process, starter and database killed while moves arrive: none is missing, none is there twice', async ({
   playwright,
 }) => {
-  test.setTimeout(180_000);
+  test.setTimeout(300_000);
   await rm(FOLDER, { recursive: true, force: true });
   await start();
   const client = await playwright.request.newContext({ baseURL: OWN_SITE });
@@ -90,10 +94,10 @@ test('web process, starter and database killed while moves arrive: none is missi
     200,
   );
 
-  // No two moves in a row are alike, so that a missing, doubled or misplaced one is seen.
-  const list = Array.from({ length: 3 * MOVES_A_ROUND }, (_, i) => ({
+  // No two neighbours are alike, so that a missing, doubled or misplaced one is seen.
+  const list = Array.from({ length: ROUNDS * MOVES_A_ROUND }, (_, i) => ({
     opId: randomUUID(),
-    move: { kind: 'drip', from: 'acid', into: i % 2 ? 'water' : 'buffer', drops: 1 + (i % 5) },
+    move: { kind: 'drip', from: 'acid', into: i % 2 ? 'water' : 'buffer', drops: 1 + (i % 3) },
   }));
   let confirmed = 0;
   /** As the browser does: what is not confirmed is sent again until somebody answers. */
@@ -136,10 +140,10 @@ test('web process, starter and database killed while moves arrive: none is missi
       process.kill(databasePid(), 'SIGKILL');
     },
   ];
-  for (const [round, kill] of kills.entries()) {
+  for (let round = 0; round < ROUNDS; round++) {
     const sending = send((round + 1) * MOVES_A_ROUND);
     await expect.poll(() => confirmed, { intervals: [5] }).toBeGreaterThan(round * MOVES_A_ROUND + 5);
-    await kill();
+    await kills[round % kills.length]!();
     await sending;
   }
 
@@ -149,4 +153,33 @@ test('web process, starter and database killed while moves arrive: none is missi
   const run = progress.runs.find((one) => one.runId === runId)!;
   expect(run.moves).toEqual(list.map(({ move }) => move));
   await client.dispose();
+});
+
+/** Processes that serve this test's database. */
+const databases = (): number[] =>
+  readdirSync('/proc')
+    .filter((name) => /^\d+$/.test(name))
+    .filter((pid) => {
+      try {
+        return readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes(
+          `--datadir=${join(resolve(FOLDER), 'mariadb')}`,
+        );
+      } catch {
+        // It ended while the list was read.
+        return false;
+      }
+    })
+    .map(Number);
+
+test('a starter that is asked to end while it brings the database back leaves none running', async () => {
+  test.setTimeout(120_000);
+  await rm(FOLDER, { recursive: true, force: true });
+  await start();
+  expect(databases()).toEqual([databasePid()]);
+  const child = starter!;
+  process.kill(databasePid(), 'SIGKILL');
+  await expect.poll(() => said, { intervals: [5], timeout: 20_000 }).toContain('starting it again');
+  child.kill('SIGTERM');
+  await ended(child);
+  expect(databases()).toEqual([]);
 });

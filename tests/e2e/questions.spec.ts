@@ -393,7 +393,7 @@ test.describe('with a session that has ended', () => {
     mailTo,
     context,
   }) => {
-      const person = newPerson('Runa Holt');
+    const person = newPerson('Runa Holt');
     await signUp(page, mailTo, person);
     await signIn(page, person, LESSON);
     await at(page, 'who-takes-it');

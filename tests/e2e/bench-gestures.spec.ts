@@ -52,9 +52,14 @@ test.describe('by mouse', () => {
   test('a bottle let go over a vessel stays tipped: a tap is one drop, a hold pours, Escape puts it back', async ({
     page,
   }) => {
-    await open(page);
-    await bottle(page, 'acid').dragTo(vessel(page, 'water'), { steps: 10 });
-    await expect(page.locator('.tipped')).toBeVisible();
+    // Who rests over the vessel pours, and on a busy machine a hand may seem to rest: then it is done again.
+    await expect(async () => {
+      await open(page);
+      await bottle(page, 'acid').dragTo(vessel(page, 'water'), { steps: 3 });
+      await expect(page.locator('.tipped')).toBeVisible({ timeout: 1500 });
+      await expect(lines(page)).toHaveCount(0);
+      await expect(pH(page, 0)).toHaveText('7.16', { timeout: 1500 });
+    }).toPass({ timeout: 30_000 });
     const at = await middle(vessel(page, 'water'));
     await page.mouse.click(at.x, at.y);
     await expect(lines(page)).toHaveCount(1);

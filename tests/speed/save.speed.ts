@@ -111,6 +111,7 @@ function byDriver(pool: Pool, person: number, lesson: number, session: string): 
         'SELECT l.id, r.revision FROM lessons l JOIN lesson_revisions r ON r.lesson_id = l.id AND r.revision = 1 WHERE l.id = ?',
         [lesson],
       );
+      await connection.query('SET SESSION TRANSACTION ISOLATION LEVEL READ COMMITTED');
       await connection.query('START TRANSACTION');
       await connection.query('SELECT * FROM runs WHERE public_id = ? AND person_id = ? FOR UPDATE', [
         publicId,

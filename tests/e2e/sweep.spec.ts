@@ -1,9 +1,10 @@
 // Every route with every method as every role: what the rules promise is what the running product answers.
-import type { APIRequestContext } from '@playwright/test';
+import type { APIRequestContext, Page } from '@playwright/test';
 import { readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { demoPassword } from '../../src/server/demo/passwords.ts';
 import { emailOf, PEOPLE } from '../../src/server/demo/people.ts';
+import { newPerson, signIn } from './people.ts';
 import { DATA_FOLDER, SITE } from './site.ts';
 import { expect, test } from './test.ts';
 
@@ -11,9 +12,19 @@ const METHODS = ['GET', 'HEAD', 'POST', 'PUT', 'PATCH', 'DELETE', 'OPTIONS'] as 
 const NOBODY = '00000000-0000-4000-8000-000000000000';
 
 type Role =
-  'visitor' | 'ended' | 'learner' | 'seat' | 'teacher' | 'admin' | 'school author' | 'author' | 'operator';
-/** Who stands for which role; the visitor is nobody. */
+  | 'visitor'
+  | 'unverified'
+  | 'ended'
+  | 'learner'
+  | 'seat'
+  | 'teacher'
+  | 'admin'
+  | 'school author'
+  | 'author'
+  | 'operator';
+/** Who stands for which role; the visitor is nobody, and who has not confirmed an address is somebody new. */
 const ROLES: Readonly<Record<Exclude<Role, 'visitor'>, string>> = {
+  unverified: 'new',
   ended: 'bram',
   learner: 'noor',
   seat: 'ikaika',
@@ -23,8 +34,9 @@ const ROLES: Readonly<Record<Exclude<Role, 'visitor'>, string>> = {
   author: 'edvin',
   operator: 'constance',
 };
+const NEW_NAME = 'Sunniva Garth';
 const SIGNED_IN = Object.keys(ROLES) as Exclude<Role, 'visitor'>[];
-const MEMBERS = SIGNED_IN.filter((role) => role !== 'ended');
+const MEMBERS = SIGNED_IN.filter((role) => role !== 'ended' && role !== 'unverified');
 const HARROWMERE: readonly Role[] = ['seat', 'teacher', 'admin', 'school author'];
 
 interface Row {
@@ -83,7 +95,7 @@ const TABLE: Readonly<Record<string, readonly Row[]>> = {
     {
       at: '/api/lessons/what-is-acidic/progress',
       method: 'GET',
-      expected: { visitor: 401, ended: 403, others: 200 },
+      expected: { visitor: 401, ended: 403, unverified: 403, others: 200 },
     },
     {
       at: '/api/lessons/the-sluice-sample/progress',
@@ -127,21 +139,87 @@ const passwordOf = (key: string): string => {
   return demoPassword(secret, shown ? key : 'everyone else');
 };
 
+/** Given again as it is: renaming changes nothing. */
+const nameOf = (role: Role): string =>
+  PEOPLE.find((one) => role !== 'visitor' && one.key === ROLES[role])?.name ?? NEW_NAME;
+
+/** Signs in through the page; the context's requests are that person's from then on. */
+async function signedIn(page: Page, role: Exclude<Role, 'visitor'>): Promise<APIRequestContext> {
+  let person = { name: '', email: '', password: '' };
+  if (role === 'unverified') {
+    person = newPerson(NEW_NAME);
+    await page.goto('/sign-up');
+    await page.getByLabel('Name').fill(person.name);
+    await page.getByLabel('E-mail').fill(person.email);
+    await page.getByLabel('Password').fill(person.password);
+    await page.getByRole('button', { name: 'Sign up' }).click();
+    await expect(page.getByText('We have sent you a mail.')).toBeVisible();
+  } else {
+    const { key, name } = PEOPLE.find((one) => one.key === ROLES[role])!;
+    person = { name, email: emailOf(PEOPLE.find((one) => one.key === key)!), password: passwordOf(key) };
+  }
+  await signIn(page, person);
+  return page.context().request;
+}
+
+interface ActionRow {
+  /** A form that the action takes and that changes nothing. */
+  form: Readonly<Record<string, string>>;
+  visitor: number;
+  /** For whoever is signed in. */
+  others: number | readonly number[];
+}
+
+const WRONG = 'not the password';
+const TOKEN = { form: { token: 'none' }, visitor: 400, others: 400 };
+
+/** The actions of src/actions: what a form that is complete gets from whom. Signing out comes last. */
+const ACTIONS: Readonly<Record<string, ActionRow>> = {
+  signUp: {
+    form: { displayName: 'Nobody', email: 'nobody@learner.example', password: 'short' },
+    visitor: 400,
+    others: 400,
+  },
+  signIn: { form: { email: 'no address', password: WRONG }, visitor: 400, others: 400 },
+  verify: TOKEN,
+  verifyAgain: { form: {}, visitor: 401, others: 200 },
+  forgot: { form: { email: 'nobody@learner.example' }, visitor: 200, others: 200 },
+  reset: { form: { token: 'none', password: 'samphire at low tide' }, visitor: 400, others: 400 },
+  changePassword: { form: { current: WRONG, password: 'samphire at low tide' }, visitor: 401, others: 400 },
+  // Asked for at most five times in an hour, whatever came of it.
+  changeEmail: {
+    form: { current: WRONG, email: 'nobody@learner.example' },
+    visitor: 401,
+    others: [400, 429],
+  },
+  confirmEmailChange: TOKEN,
+  rename: { form: { displayName: '' }, visitor: 401, others: 200 },
+  setConventions: {
+    form: { decimal: '.', concentration: 'mol/L', volume: 'mL', pH: 'two decimals' },
+    visitor: 401,
+    others: 200,
+  },
+  endSession: { form: { session: NOBODY }, visitor: 401, others: 200 },
+  deleteAccount: { form: { current: WRONG, sure: 'yes' }, visitor: 401, others: 400 },
+  signOut: { form: {}, visitor: 200, others: 200 },
+};
+
+test('every action of src/actions stands in the table', () => {
+  const source = readdirSync('src/actions')
+    .map((file) => readFileSync(join('src/actions', file), 'utf8'))
+    .join('');
+  const actions = [...source.matchAll(/^ {2}(\w+): defineAction\(/gm)].map(([, name]) => name!);
+  expect(Object.keys(ACTIONS).sort()).toEqual(actions.sort());
+  expect(source.match(/defineAction\(/g)).toHaveLength(actions.length);
+});
+
 for (const role of ['visitor', ...SIGNED_IN] as const)
-  test(`as ${role}: each route and method`, async ({ playwright, browser }) => {
+  test(`as ${role}: each route and action with each method`, async ({ playwright, browser }) => {
     test.setTimeout(120_000);
-    let client: APIRequestContext;
-    if (role === 'visitor') client = await playwright.request.newContext({ baseURL: SITE });
-    else {
-      const context = await browser.newContext({ baseURL: SITE });
-      const page = await context.newPage();
-      await page.goto('/sign-in');
-      await page.getByLabel('E-mail').fill(emailOf(PEOPLE.find((one) => one.key === ROLES[role])!));
-      await page.getByLabel('Password').fill(passwordOf(ROLES[role]));
-      await page.getByRole('button', { name: 'Sign in' }).click();
-      await page.waitForURL('/lessons');
-      client = context.request;
-    }
+    const client =
+      role === 'visitor'
+        ? await playwright.request.newContext({ baseURL: SITE })
+        : await signedIn(await (await browser.newContext({ baseURL: SITE })).newPage(), role);
     const wrong: string[] = [];
     for (const [pattern, addresses] of Object.entries(TABLE))
       for (const { at, method = 'GET', expected } of addresses)
@@ -157,7 +235,30 @@ for (const role of ['visitor', ...SIGNED_IN] as const)
           };
           if (!good()) wrong.push(`${asked} ${at}: ${status}, not ${usual}`);
         }
+    for (const [name, { form, visitor, others }] of Object.entries(ACTIONS)) {
+      const at = `/_actions/people.${name}`;
+      for (const method of METHODS.filter((one) => one !== 'POST')) {
+        const status = (
+          await client.fetch(at, { method, maxRedirects: 0, headers: { Origin: SITE } })
+        ).status();
+        if (![404, 405].includes(status)) wrong.push(`${method} ${name}: ${status}`);
+      }
+      const foreign = await client.post(at, {
+        form,
+        maxRedirects: 0,
+        headers: { Origin: 'http://elsewhere.example' },
+      });
+      if (foreign.status() !== 403) wrong.push(`${name} from elsewhere: ${foreign.status()}`);
+      const sent = name === 'rename' ? { displayName: nameOf(role) } : form;
+      const status = (
+        await client.post(at, { form: sent, maxRedirects: 0, headers: { Origin: SITE } })
+      ).status();
+      const expected = role === 'visitor' ? visitor : others;
+      if (![expected].flat().includes(status)) wrong.push(`${name}: ${status}, not ${String(expected)}`);
+    }
     expect(wrong).toEqual([]);
+    // Signed out by the last action: the browser is nobody's.
+    expect((await client.get('/account', { maxRedirects: 0 })).status()).toBe(303);
   });
 
 test('a closed lesson shows nothing of what is in it', async ({ playwright }) => {

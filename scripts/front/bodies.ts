@@ -9,6 +9,8 @@ const KB = 1024;
 const CAPS: [RegExp, number][] = [
   [/^\/api\/runs\/[^/]+\/moves$/, 256 * KB],
   [/^\/api\/takeover$/, 1024 * KB],
+  // A lesson of the greatest length, in characters of three bytes, as a form sends them.
+  [/^\/desk$/, 1024 * KB],
 ];
 const USUAL_CAP = 64 * KB;
 

@@ -70,6 +70,13 @@ const TABLE: Readonly<Record<string, readonly Row[]>> = {
   '/account': [account('/account')],
   '/account/export': [account('/account/export')],
   '/closed/[slug]': [{ at: '/closed/what-is-acidic', expected: only(MEMBERS, 303, 200) }],
+  '/desk': [
+    { at: '/desk', expected: { visitor: 303, 'school author': 200, author: 200, others: 404 } },
+    {
+      at: '/desk?lesson=the-sluice-sample&revision=1',
+      expected: { visitor: 303, 'school author': 200, others: 404 },
+    },
+  ],
   '/forgot': [page('/forgot')],
   '/how-the-numbers-are-made': [page('/how-the-numbers-are-made')],
   '/lessons': [page('/lessons')],

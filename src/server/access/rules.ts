@@ -25,6 +25,7 @@ export const rules: Readonly<Record<string, Rule>> = {
   '/account/export': 'signed-in',
   '/accessibility': 'public',
   '/closed/[slug]': 'public',
+  '/desk': { role: ['author'] },
   '/forgot': 'public',
   '/how-the-numbers-are-made': 'public',
   '/lessons': 'public',

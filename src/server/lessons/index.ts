@@ -1,2 +1,8 @@
 export { listLessons, readLesson, readLessonById, type StoredLesson } from './read.ts';
-export { LessonFaults, publishLesson, publishShippedCourse, type Published } from './publish.ts';
+export {
+  LessonFaults,
+  publishCompiled,
+  publishLesson,
+  publishShippedCourse,
+  type Published,
+} from './publish.ts';

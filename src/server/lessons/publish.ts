@@ -46,7 +46,7 @@ export async function publishLesson(
   file: string,
   schoolId: number | null = null,
 ): Promise<Published> {
-  return store(compiled(markdown, file), markdown, file, schoolId);
+  return publishCompiled(compiled(markdown, file), markdown, file, schoolId);
 }
 
 function compiled(markdown: string, file: string): CompiledLesson {
@@ -55,7 +55,8 @@ function compiled(markdown: string, file: string): CompiledLesson {
   return result.lesson;
 }
 
-function store(
+/** Publishes what was compiled already, as `publishLesson` does. */
+export function publishCompiled(
   lesson: CompiledLesson,
   markdown: string,
   file: string,
@@ -134,7 +135,7 @@ export async function publishShippedCourse(folder: string): Promise<Published[]>
   for (const name of files) {
     const markdown = await readFile(path.join(folder, name), 'utf8');
     const lesson = compiled(markdown, name);
-    if (!lesson.draft) published.push(await store(lesson, markdown, name, null));
+    if (!lesson.draft) published.push(await publishCompiled(lesson, markdown, name, null));
   }
   return published;
 }

@@ -15,6 +15,10 @@ const MOST_BYTES = 400_000;
 const compress = promisify(brotliCompress);
 const decompress = promisify(brotliDecompress);
 
+/** Does this Accept-Encoding take Brotli? A weight of zero is a refusal. */
+const takesBrotli = (accepted: string | null): boolean =>
+  (accepted ?? '').split(',').some((one) => /^\s*br\s*(;\s*q=(?!0(\.0*)?\s*$)[\d.]+\s*)?$/i.test(one));
+
 /** One name for all that a page was made from. */
 export const pageKey = (parts: unknown): string =>
   createHash('sha256').update(JSON.stringify(parts)).digest('base64');
@@ -27,7 +31,7 @@ export async function keptPage(key: string, acceptEncoding: string | null): Prom
   kept.delete(key);
   kept.set(key, page);
   const headers = new Headers(page.headers);
-  if (/\bbr\b/.test(acceptEncoding ?? '')) {
+  if (takesBrotli(acceptEncoding)) {
     headers.set('Content-Encoding', 'br');
     return new Response(new Uint8Array(page.body), { headers });
   }

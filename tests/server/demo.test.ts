@@ -112,7 +112,10 @@ test('everything is in the past, and people stand at different points', async ()
 test('a site that is no demo refuses it', async () => {
   const { DEMO } = config;
   Object.assign(config, { DEMO: 'false' });
-  await expect(loadDemoWorld()).rejects.toThrow('by the demo alone');
-  Object.assign(config, { DEMO });
+  try {
+    await expect(loadDemoWorld()).rejects.toThrow('by the demo alone');
+  } finally {
+    Object.assign(config, { DEMO });
+  }
   expect(readConfig({ COOKIE_SECRET: 'x'.repeat(32) }).DEMO).toBe('false');
 });

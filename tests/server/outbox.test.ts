@@ -119,6 +119,18 @@ test('a refusal is tried again with growing pauses, and given up at last with it
   expect(caught).toEqual([]);
 });
 
+test.each([550, 551, 553])(
+  'a recipient whom the server does not know (%d) is given up at once',
+  async (code) => {
+    refusal = { code, text: 'no such mailbox' };
+    await enqueue(mail(`verify:unknown-${code}`, to()));
+    await sendDue();
+    const [row] = await rows();
+    expect(row).toMatchObject({ state: 'failed', tries: 1 });
+    expect(row!.last_error).toContain('no such mailbox');
+  },
+);
+
 test('after a refusal the mail goes out once the server takes it', async () => {
   const address = to();
   refusal = { code: 421, text: 'shutting down' };

@@ -6,6 +6,8 @@ import { log } from '../log.ts';
 import { render, type Template } from './templates.ts';
 
 const MOST_TRIES = 12;
+/** What a mail server says of a recipient who does not exist, has moved or cannot be (RFC 5321, section 4.2.3): asking again is no use. */
+const FINAL = new Set([550, 551, 553]);
 
 interface Row {
   id: number;
@@ -63,7 +65,8 @@ async function sendOne(): Promise<boolean> {
     } catch (error) {
       const tries = row.tries + 1;
       const wait_s = Math.min(3600, 5 * 2 ** row.tries);
-      const state = tries >= MOST_TRIES ? 'failed' : 'waiting';
+      const { responseCode = 0 } = error as { responseCode?: number };
+      const state = tries >= MOST_TRIES || FINAL.has(responseCode) ? 'failed' : 'waiting';
       log.warn({ outbox: row.id, tries, state, reason: (error as Error).message }, 'mail not sent');
       await sequelize.query(
         `UPDATE outbox SET tries = :tries, state = :state, next_try_at = DATE_ADD(NOW(3), INTERVAL :wait_s SECOND), last_error = :reason WHERE id = :id`,

@@ -26,6 +26,11 @@ const BY_HAND: Readonly<Record<string, (v: Readonly<Record<string, number>>) => 
   'base-for-vinegar': ({ c }) => (0.025 * c!) / 0.1,
   'acid-in': ({ v }) => PKA + lg((2 - 0.1 * v!) / (2 + 0.1 * v!)),
   'base-in': ({ v }) => PKA + lg((0.5 + 0.1 * v!) / (1 - 0.1 * v!)),
+  // mmol of RNH2 over mmol of RNH3+; pKa 8.072 at 25 °C (Goldberg, Kishore and Lennen 2002).
+  'acid-counted': ({ v }) => 8.072 + lg((2.5 - 0.1 * v!) / (2.5 + 0.1 * v!)),
+  'base-counted': ({ v }) => 8.072 + lg((0.5 + 0.1 * v!) / (1.5 - 0.1 * v!)),
+  // One part in 1 + r is turned into the acid; mmol over mmol in each mL.
+  'make-it': ({ n, r }) => n! / (1 + r!) / 0.2 / 1000,
   'two-to-one': ({ c }) => (50 * c! * (1 / 3)) / 0.1 / 1000,
 };
 

@@ -192,7 +192,7 @@ test.describe('by keys alone', () => {
     await page.getByLabel('Into which vessel').selectOption('buffer');
     await page.getByRole('button', { name: 'Hold to pour' }).focus();
     await page.keyboard.down('Space');
-    await page.waitForTimeout(500);
+    await expect(pH(page, 1)).not.toHaveText('4.76');
     await page.keyboard.up('Space');
     await expect(lines(page)).toHaveCount(1);
     await page.getByLabel('Volume in mL').focus();

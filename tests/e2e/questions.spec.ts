@@ -435,8 +435,13 @@ test.describe('on a phone', () => {
     await expect(feedback(page, 'drop-by-drop')).toBeVisible();
     await at(page, 'acid-in');
     await field(page, 'acid-in').fill('4.76');
-    await question(page, 'acid-in').getByRole('button', { name: 'Check' }).tap();
-    await expect(feedback(page, 'acid-in').locator('.poured-tube')).toHaveCount(2);
+    // A finger that a busy machine lets rest too long has pressed and not tapped: it taps again.
+    const tubes = feedback(page, 'acid-in').locator('.poured-tube');
+    await expect(async () => {
+      if ((await tubes.count()) === 0)
+        await question(page, 'acid-in').getByRole('button', { name: 'Check' }).tap();
+      await expect(tubes).toHaveCount(2, { timeout: 4000 });
+    }).toPass({ timeout: 25_000 });
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390);
     await expectAccessible();
   });
